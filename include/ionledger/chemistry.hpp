@@ -51,6 +51,9 @@ struct AlternativeValue {
 struct EquilibriumConstant {
   double log10_k = 0;  ///< At 25 degC, molality scale, infinite dilution.
   std::optional<TemperatureFunction> of_temperature;
+  bool is_water_ion_product =
+      false;                        ///< Takes water_log10_ion_product() instead of a function here.
+  std::string step_at_25_is_known;  ///< Why the function may miss log10_k at 25 degC by over 0.02.
   std::optional<double> enthalpy_kj_per_mol;        ///< Of reaction at 25 degC.
   std::optional<double> heat_capacity_j_per_mol_k;  ///< Of reaction, constant.
   TemperatureRange valid;
@@ -94,6 +97,8 @@ struct Species {
   /// Formation from the basis: ln a = ln K + sum coefficient ln a_basis + water_exponent ln a_w.
   std::vector<double> formation;  ///< n_basis coefficients.
   double water_exponent = 0;
+  /// ln K of formation = sum of multiplier * ln K of the published reaction of species[first].
+  std::vector<std::pair<int, double>> formation_constants;
   std::optional<double> molar_volume_cm3;  ///< Partial molar volume at infinite dilution, 25 degC.
 };
 
@@ -110,6 +115,8 @@ struct Mineral {
   /// Ion activity product: ln Q = sum coefficient ln a_basis + water_exponent ln a_w.
   std::vector<double> dissolution;
   double water_exponent = 0;
+  /// ln Q at saturation = ln K of the reaction + sum of multiplier * ln K of species[first].
+  std::vector<std::pair<int, double>> dissolution_constants;
   bool is_common_scale =
       true;            ///< False: saturation is reported, but it rarely forms by itself in a plant.
   std::string remark;  ///< What a plant chemist should know about it, one sentence.
@@ -127,6 +134,7 @@ struct Gas {
   double bar_per_unit = 1;  ///< Pressure unit of the published constant: 1.01325 for atm.
   std::vector<double> dissolution;
   double water_exponent = 0;
+  std::vector<std::pair<int, double>> dissolution_constants;  ///< As for a mineral.
 };
 
 /// What one word of a laboratory report means.
