@@ -145,6 +145,9 @@ struct Constituent {
   std::vector<std::string> symbols;  ///< Also accepted: "Ca", "Ca+2".
   Kind kind = Kind::total;
   std::string basis_species;  ///< The basis species whose total it is; empty unless kind is total.
+  /// Basis species behind the two kinds that are not totals: the two that hardness counts; the one
+  /// whose total alkalinity settles when the pH is known.
+  std::vector<std::string> parts;
   /// Formula after "as" -> mol of the constituent (eq, for alkalinity and hardness) in one mole of
   /// it.
   std::map<std::string, double> as;

@@ -41,6 +41,7 @@ struct Stream {
 
   std::optional<MeasuredPH> ph;
   std::optional<double> alkalinity_eq_per_kg;
+  int carbon_component = -1;  ///< The total that alkalinity settles when the pH is known.
   bool inorganic_carbon_is_known = false;
   std::optional<double> hardness_eq_per_kg;  ///< As reported, for the check against Ca and Mg.
   Closure::By closed_by = Closure::By::nothing;
@@ -49,7 +50,10 @@ struct Stream {
 
   std::vector<Conversion> conversions;
   std::vector<Caution> cautions;
-  double laboratory_density_kg_per_l = 0;  ///< Used for the conversion; at 25 degC unless measured.
+  /// Laboratory litres that hold one kg of water with its solutes, and their density.
+  double litre_per_kg_water = 0;
+  double laboratory_density_kg_per_l = 0;
+  bool density_is_measured = false;
 };
 
 /// Totals per kg of water from a laboratory report.

@@ -22,9 +22,9 @@ std::string lower(std::string_view text) {
 
 }  // namespace
 
-int Chemistry::species_index(std::string_view name) const { return index_of(species, name); }
-int Chemistry::mineral_index(std::string_view name) const { return index_of(minerals, name); }
-int Chemistry::gas_index(std::string_view name) const { return index_of(gases, name); }
+int Chemistry::species_index(std::string_view wanted) const { return index_of(species, wanted); }
+int Chemistry::mineral_index(std::string_view wanted) const { return index_of(minerals, wanted); }
+int Chemistry::gas_index(std::string_view wanted) const { return index_of(gases, wanted); }
 
 int Chemistry::constituent_index(std::string_view name_or_symbol) const {
   const std::string wanted = lower(name_or_symbol);

@@ -294,21 +294,21 @@ class Compiler {
 
   void constituents() {
     for (const Constituent& constituent : chemistry_.constituents) {
-      const int basis = chemistry_.species_index(constituent.basis_species);
-      if (constituent.kind == Constituent::Kind::total &&
-          (basis < 0 || basis >= chemistry_.n_basis)) {
-        error("constituent",
-              constituent.name,
-              fmt::format("\"{}\" is not a basis species", constituent.basis_species),
-              fmt::format("\"{}\" for {}", constituent.basis_species, constituent.name),
-              "one of the [[basis]] species");
-      }
+      constituent_parts(constituent);
       if (!constituent.mostly.empty() && chemistry_.species_index(constituent.mostly) < 0) {
         error("constituent",
               constituent.name,
               fmt::format("\"{}\" is not a species of these models", constituent.mostly),
               fmt::format("\"{}\" for {}", constituent.mostly, constituent.name),
               "a species defined in some file of the models");
+      }
+      if (constituent.as.empty() ||
+          (!constituent.plain.empty() && constituent.as.count(constituent.plain) == 0)) {
+        error("constituent",
+              constituent.name,
+              fmt::format("\"as\" of {} is empty or lacks its plain formula", constituent.name),
+              fmt::format("plain = \"{}\"", constituent.plain),
+              "a table \"as\" that holds the plain formula and every other one in use");
       }
       for (const auto& [formula, amount] : constituent.as) {
         if (composition_of(formula) && amount > 0) continue;
@@ -318,6 +318,29 @@ class Compiler {
               fmt::format("{} = {} for {}", formula, amount, constituent.name),
               "a formula, and the moles of the constituent in one mole of it");
       }
+    }
+  }
+
+  void constituent_parts(const Constituent& constituent) {
+    using Kind = Constituent::Kind;
+    std::vector<std::string> parts = constituent.parts;
+    if (constituent.kind == Kind::total) parts.push_back(constituent.basis_species);
+    const std::size_t wanted = constituent.kind == Kind::hardness ? 2 : 1;
+    if (parts.size() != wanted) {
+      error("constituent",
+            constituent.name,
+            fmt::format("{} names {} basis species", constituent.name, parts.size()),
+            fmt::format("{} in \"species\" and \"parts\"", parts.size()),
+            "species for a total, one of parts for alkalinity, two of parts for hardness");
+    }
+    for (const std::string& part : parts) {
+      const int basis = chemistry_.species_index(part);
+      if (basis >= 0 && basis < chemistry_.n_basis) continue;
+      error("constituent",
+            constituent.name,
+            fmt::format("\"{}\" is not a basis species", part),
+            fmt::format("\"{}\" for {}", part, constituent.name),
+            "one of the [[basis]] species");
     }
   }
 
