@@ -68,8 +68,12 @@ struct AssessedState {
 
   double cations_eq_per_kg = 0;
   double anions_eq_per_kg = 0;     ///< Positive.
-  double imbalance_eq_per_kg = 0;  ///< Cations minus anions, of the analysis as reported.
+  double imbalance_eq_per_kg = 0;  ///< Cations minus anions of the ledger.
   double imbalance_percent = 0;    ///< 100 (cations - anions) / (cations + anions).
+  /// The same before anything gave way; equal to the two above unless a constituent closed the
+  /// balance.
+  double reported_imbalance_eq_per_kg = 0;
+  double reported_imbalance_percent = 0;
   double accepted_imbalance_percent =
       0;  ///< Of the standard's acceptance criterion for this stream.
   std::string closed_by;

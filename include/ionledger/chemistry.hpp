@@ -155,6 +155,8 @@ struct Constituent {
   std::string plain;
   /// Equivalents in one mole, for meq/L; 0 where meq means nothing.
   double equivalents = 0;
+  /// Reported in every full analysis of a natural water: its absence deserves a caution.
+  bool is_major = false;
   /// Species the constituent mostly is at neutral pH: its volume and mass when the litre is turned
   /// into kg.
   std::string mostly;

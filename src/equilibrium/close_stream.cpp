@@ -137,6 +137,14 @@ class StreamCloser {
             "an ion such as \"sodium\", or \"nothing\"",
             "close by an ion, or leave out one of alkalinity and inorganic_carbon");
     }
+    if (knows_alkalinity() && stream_.closing_component == stream_.carbon_component &&
+        stream_.closing_component >= 0) {
+      error(stream_.closure_span,
+            "alkalinity fixes the inorganic carbon, so it cannot close the charge balance",
+            fmt::format("closed_by = \"{}\" beside alkalinity", closing_name()),
+            "another ion, such as \"sodium\" or \"chloride\"",
+            "close by another ion, or leave out the alkalinity");
+    }
     return !contradiction_;
   }
 
