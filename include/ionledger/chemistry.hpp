@@ -131,7 +131,9 @@ struct Gas {
   std::vector<Term> reaction;
   std::string reaction_text;
   EquilibriumConstant constant;
-  double bar_per_unit = 1;  ///< Pressure unit of the published constant: 1.01325 for atm.
+  double bar_per_unit = 1;       ///< Pressure unit of the published constant: 1.01325 for atm.
+  double caution_above_bar = 0;  ///< 0: no caution of its own.
+  std::string caution;           ///< What can hurt above that pressure, one or two sentences.
   std::vector<double> dissolution;
   double water_exponent = 0;
   std::vector<std::pair<int, double>> dissolution_constants;  ///< As for a mineral.

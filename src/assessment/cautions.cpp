@@ -16,7 +16,6 @@ constexpr double corrosive_above_ph = 12.5;
 constexpr double share_that_matters = 0.02;  // of a basis total; smaller species move nothing
 constexpr double index_that_matters = -1.0;  // a mineral far below saturation needs no caution
 constexpr double gas_that_leaves_bar = 1.0;
-constexpr double ammonia_that_smells_bar = 25e-6;  // 25 ppm by volume, a common occupational limit
 constexpr std::size_t names_in_a_list = 6;
 
 bool is_outside(const TemperatureRange& range, double degc) {
@@ -80,7 +79,7 @@ class CautionList {
   std::vector<Caution> cautions_;
 };
 
-void add_hazards(const AssessedState& state, CautionList& list) {
+void add_hazards(const AssessedState& state, const Chemistry& chemistry, CautionList& list) {
   if (state.ph < corrosive_below_ph || state.ph > corrosive_above_ph) {
     list.add("handling",
              fmt::format(
@@ -89,12 +88,12 @@ void add_hazards(const AssessedState& state, CautionList& list) {
                  state.ph));
   }
   for (const GasLine& gas : state.gases) {
-    if (gas.formula == "NH3" && gas.partial_pressure_bar > ammonia_that_smells_bar) {
-      list.add(
-          "ammonia",
-          fmt::format("The air above an open tank can reach {:.2g} bar of ammonia, over a common "
-                      "occupational limit of 25 ppm. Ventilate; local limits decide.",
-                      gas.partial_pressure_bar));
+    const Gas& known = chemistry.gases[static_cast<std::size_t>(chemistry.gas_index(gas.gas))];
+    if (known.caution_above_bar > 0 && gas.partial_pressure_bar > known.caution_above_bar) {
+      list.add(gas.gas,
+               fmt::format("Air in equilibrium with this water holds {:.2g} bar of it. {}",
+                           gas.partial_pressure_bar,
+                           known.caution));
     } else if (gas.partial_pressure_bar > gas_that_leaves_bar) {
       list.add(gas.gas,
                fmt::format(
@@ -123,7 +122,7 @@ std::vector<Caution> cautions_of(const AssessedState& state,
                  model.max_ionic_strength_molal,
                  model.name));
   }
-  add_hazards(state, list);
+  add_hazards(state, chemistry, list);
   list.add(missing_majors_caution(stream, chemistry));
   for (const Caution& caution : closed.cautions) list.add(caution);
   for (const Caution& caution : stream.cautions) list.add(caution);
