@@ -12,7 +12,7 @@
 #include <boost/units/base_units/si/meter.hpp>
 #include <boost/units/base_units/si/mole.hpp>
 #include <boost/units/base_units/si/second.hpp>
-#include <boost/units/derived_dimension.hpp>
+#include <boost/units/dimension.hpp>
 #include <boost/units/make_system.hpp>
 #include <boost/units/quantity.hpp>
 #include <boost/units/unit.hpp>
@@ -20,6 +20,7 @@
 #include <optional>
 #include <string>
 #include <string_view>
+#include <type_traits>
 #include <variant>
 
 namespace ionledger {
@@ -43,23 +44,37 @@ using System = bu::make_system<bu::si::meter_base_unit,
                                bu::si::mole_base_unit,
                                EquivalentUnit>::type;
 
+namespace detail {
+
+/// A base dimension to a power. The power zero must vanish from the list of dimensions: Boost would
+/// keep it, and then no product of two quantities would be of the type it ought to be.
+template <class Base, int Exponent>
+using Power = typename std::conditional_t<
+    Exponent == 0,
+    std::type_identity<bu::dimensionless_type>,
+    bu::static_power<typename Base::dimension_type, bu::static_rational<Exponent>>>::type;
+
+template <class... Factors>
+struct Product {
+  using type = bu::dimensionless_type;
+};
+template <class First, class... Rest>
+struct Product<First, Rest...> {
+  using type = typename boost::mpl::times<First, typename Product<Rest...>::type>::type;
+};
+
+}  // namespace detail
+
 /// The coherent unit whose exponents are length, mass, time, current, temperature, amount,
 /// equivalents.
 template <int L, int M, int T, int I, int Theta, int N, int Eq>
-using Unit = bu::unit<typename bu::derived_dimension<bu::length_base_dimension,
-                                                     L,
-                                                     bu::mass_base_dimension,
-                                                     M,
-                                                     bu::time_base_dimension,
-                                                     T,
-                                                     bu::current_base_dimension,
-                                                     I,
-                                                     bu::temperature_base_dimension,
-                                                     Theta,
-                                                     bu::amount_base_dimension,
-                                                     N,
-                                                     EquivalentDimension,
-                                                     Eq>::type,
+using Unit = bu::unit<typename detail::Product<detail::Power<bu::length_base_dimension, L>,
+                                               detail::Power<bu::mass_base_dimension, M>,
+                                               detail::Power<bu::time_base_dimension, T>,
+                                               detail::Power<bu::current_base_dimension, I>,
+                                               detail::Power<bu::temperature_base_dimension, Theta>,
+                                               detail::Power<bu::amount_base_dimension, N>,
+                                               detail::Power<EquivalentDimension, Eq>>::type,
                       System>;
 
 template <int L, int M, int T, int I, int Theta, int N, int Eq>
@@ -141,20 +156,45 @@ inline constexpr std::size_t max_quantity_text = 200;
 ///           with `/`, `*`, `.`, powers as `m3`, `m^3`, `m³`, `h^-1`; both micro signs; `°C`,
 ///           `degC`.
 /// Degrees   hardness degrees (degdH, degfH, degeH) are equivalents of calcium and magnesium:
-///           1 degdH = 10 mg CaO per litre.
+///           1 degdH = 10 mg CaO, 1 degfH = 10 mg CaCO3, 1 degeH = 14.254 mg CaCO3 per litre, 2 eq
+///           per mole.
 /// Refuses   `ppm` unless `ppm` says what it means; ppb, numbers that are not finite, a missing
-/// unit,
-///           an unknown unit (with the nearest known one), temperatures below 0 K, °C in a product.
+///           unit, an unknown unit (with the nearest known one), temperatures below 0 K, °C in a
+///           product, "as Formula" behind what is neither a concentration nor a mass flow.
 /// Source    SI Brochure (BIPM 2019) for the SI; US gallon 231 in^3, pound 0.45359237 kg, inch
-/// 0.0254 m
-///           exactly (NIST SP 811); psi follows from these with standard gravity 9.80665 m/s^2.
+///           0.0254 m exactly (NIST SP 811); psi follows from these with standard gravity
+///           9.80665 m/s^2.
 [[nodiscard]] std::variant<WrittenQuantity, UnitError> read_quantity(
     std::string_view text, std::optional<PpmMeaning> ppm = std::nullopt);
 
+namespace detail {
+template <class Q, class... Named>
+inline constexpr bool is_one_of = (std::is_same_v<Q, Named> || ...);
+}  // namespace detail
+
+/// The quantity types of this header.
+template <class Q>
+concept NamedQuantity = detail::is_one_of<Q,
+                                          Temperature,
+                                          TemperatureDifference,
+                                          Pressure,
+                                          VolumeFlow,
+                                          MassFlow,
+                                          Density,
+                                          AmountPerVolume,
+                                          EquivalentPerVolume,
+                                          AmountPerMass,
+                                          EquivalentPerMass,
+                                          Conductivity,
+                                          ElectricPotential,
+                                          MassFraction,
+                                          Ratio>;
+
 /// `written` as the quantity type Q, or why it is not one (the message says which units fit).
 /// Defined for every quantity type named in this header, Temperature, MassFraction and Ratio; using
-/// it with any other type does not compile.
-template <class Q>
+/// it with any other type does not compile. The basis is not looked at: chemistry settles it.
+/// A kelvin alone is an absolute temperature ("291 K"); asked for a difference, it is one as well.
+template <NamedQuantity Q>
 [[nodiscard]] std::variant<Q, UnitError> to(const WrittenQuantity& written);
 
 }  // namespace ionledger
