@@ -66,7 +66,8 @@ class Diagnostics {
 [[nodiscard]] std::string render(const Diagnostics& diagnostics);
 
 /// The word of `choices` nearest to `word` in edit distance (Damerau-Levenshtein, letter case
-/// ignored), or an empty string when none is within max(2, length/3).
+/// ignored), or an empty string when none is within max(2, length/3) or shares a letter in place.
+/// Of equally near choices the first.
 [[nodiscard]] std::string nearest_word(const std::string& word,
                                        const std::vector<std::string>& choices);
 
