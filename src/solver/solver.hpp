@@ -52,6 +52,9 @@ enum class PhaseRule { absent, may_form, imposed };
 /// One case to solve.
 struct Case {
   std::vector<double> totals;  ///< n_components; ignored where the activity is fixed.
+  /// n_components or empty: the same totals written as decimals ("16e-3"), for cases where totals
+  /// cancel to beyond the precision of a double. An empty string falls back on `totals`.
+  std::vector<std::string> decimal_totals;
   std::vector<std::optional<double>> fixed_ln_activity;  ///< n_components or empty
   std::vector<PhaseRule> phase_rules;                    ///< n_phases or empty (all absent)
   std::vector<double> ln_target;                         ///< n_phases or empty (all 0)
