@@ -61,7 +61,7 @@ bool is_shallow(std::string_view text, const std::string& name, Diagnostics& dia
     if (text[i] == '.' && ++dots > max_key_dots) {
       diagnostics.error({name, walk.line, walk.column},
                         "too many dots in a row of names",
-                        quoted(lines_of(text)[static_cast<std::size_t>(walk.line) - 1]),
+                        excerpt(lines_of(text)[static_cast<std::size_t>(walk.line) - 1]),
                         fmt::format("at most {} in one key or text", max_key_dots));
       return false;
     }
@@ -96,7 +96,7 @@ std::optional<std::string_view> readable_text(std::string_view text,
   return text;
 }
 
-std::string quoted(std::string_view text) {
+std::string excerpt(std::string_view text) {
   const std::size_t end = byte_of_column(text, max_quoted + 1);
   return fmt::format("\"{}{}\"", text.substr(0, end), end < text.size() ? "..." : "");
 }

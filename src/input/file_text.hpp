@@ -19,7 +19,7 @@ namespace ionledger {
                                                             Diagnostics& diagnostics);
 
 /// `text` in quotation marks for a message, shortened after 80 code points.
-[[nodiscard]] std::string quoted(std::string_view text);
+[[nodiscard]] std::string excerpt(std::string_view text);
 
 /// Number of code points of valid UTF-8.
 [[nodiscard]] int code_points(std::string_view text);

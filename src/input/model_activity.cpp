@@ -44,7 +44,7 @@ ActivityParameters read_parameters(TomlCursor& table, ModelDraft& draft) {
   }
   const auto value = table.find("form");
   if (value && !form.empty()) {
-    value->error(fmt::format("{} is not a form of activity coefficient", quoted(form)),
+    value->error(fmt::format("{} is not a form of activity coefficient", excerpt(form)),
                  accepted_forms);
   }
   return parameters;

@@ -134,7 +134,7 @@ class ModelReader {
     }
     for (const TomlCursor& entry : draft_.named_species) {
       if (draft_.models.chemistry.species_index(entry.key()) >= 0) continue;
-      entry.key_error(fmt::format("there is no species {}", quoted(entry.key())),
+      entry.key_error(fmt::format("there is no species {}", excerpt(entry.key())),
                       "a species of [[basis]], [[species]] or [[pair]]",
                       nearest("species", entry.key()));
     }
@@ -146,7 +146,7 @@ class ModelReader {
     const std::string name = value.text(expected).value_or("");
     if (name.empty() || draft_.where.count(kind + ":" + name) != 0) return;
     value.error(
-        fmt::format("there is no {} {}", kind, quoted(name)), expected, nearest(kind, name));
+        fmt::format("there is no {} {}", kind, excerpt(name)), expected, nearest(kind, name));
   }
 
   [[nodiscard]] std::string nearest(const std::string& kind, const std::string& name) const {
@@ -178,7 +178,7 @@ bool ModelDraft::define(const std::string& kind, const std::string& name, const 
   const auto [first, is_new] = where.emplace(kind + ":" + name, table.span());
   if (!is_new) {
     table.error(
-        fmt::format("{} is defined twice", name.empty() ? "[" + kind + "]" : quoted(name)),
+        fmt::format("{} is defined twice", name.empty() ? "[" + kind + "]" : excerpt(name)),
         fmt::format(
             "one definition; the first is at {}:{}", first->second.file, first->second.line));
   }

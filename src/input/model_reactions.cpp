@@ -52,7 +52,7 @@ auto one_of(TomlCursor& table, const std::string& key, const Words& words) {
   }
   const auto value = table.find(key);
   if (value && !text.empty()) {
-    value->error(fmt::format("{} is not a {}", quoted(text), key), expected);
+    value->error(fmt::format("{} is not a {}", excerpt(text), key), expected);
   }
   return words.front();
 }
@@ -96,7 +96,7 @@ void read_of_temperature(TomlCursor& table, EquilibriumConstant& constant) {
   const char* const expected = "a table of terms, or \"water_ion_product\"";
   const auto text = value->text(expected);
   if (text && *text != "water_ion_product") {
-    value->error(fmt::format("{} is not a function of temperature", quoted(*text)), expected);
+    value->error(fmt::format("{} is not a function of temperature", excerpt(*text)), expected);
   }
   constant.is_water_ion_product = true;
 }
@@ -158,7 +158,7 @@ Species named_species(TomlCursor& table, const std::string& file) {
   species.name = table.text_at("species", "formula and charge, such as \"Ca+2\"");
   const auto charge = charge_of(species.name);
   if (!charge) {
-    table.find("species")->error(fmt::format("{} does not end in a charge", quoted(species.name)),
+    table.find("species")->error(fmt::format("{} does not end in a charge", excerpt(species.name)),
                                  "a sign and at most one digit at the end: \"Ca+2\", \"HCO3-\"");
   }
   species.charge_number = charge.value_or(0);

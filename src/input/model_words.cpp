@@ -26,7 +26,7 @@ Constituent::Kind read_kind(TomlCursor& table) {
   const auto text = value->text(expected);
   if (text == "hardness") return Constituent::Kind::hardness;
   if (text && text != "alkalinity") {
-    value->error(fmt::format("{} is not a kind of constituent", quoted(*text)), expected);
+    value->error(fmt::format("{} is not a kind of constituent", excerpt(*text)), expected);
   }
   return Constituent::Kind::alkalinity;
 }

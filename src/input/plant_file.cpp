@@ -18,7 +18,7 @@ constexpr double max_ph = 16;
 
 const QuantityExample temperature_example = {"a temperature", "18", "degC"};
 const QuantityExample flow_example = {"a volume flow", "42", "m3/h"};
-const QuantityExample pressure_example = {"a pressure", "2.5", "bar"};
+const QuantityExample pressure_example = {"an absolute pressure", "2.5", "bar"};
 const QuantityExample conductivity_example = {"a conductivity", "850", "uS/cm"};
 const QuantityExample density_example = {"a density", "1.02", "kg/L"};
 const QuantityExample concentration_example = {"a concentration", "96", "mg/L"};
@@ -26,9 +26,8 @@ constexpr const char* accepted_concentrations =
     "mass per volume (\"96 mg/L\"), amount per volume (\"2.4 mmol/L\", \"4.8 meq/L\"), amount per "
     "kg "
     "of water (\"2.4 mmol/kg\", \"4.8 meq/kg\") or mass fraction (\"96 mg/kg\", \"3 % by mass\")";
-constexpr const char* accepted_uncertainty =
-    "a share such as \"3 %\", or a quantity of the same kind "
-    "as the value, such as \"2 mg/L\"";
+const QuantityExample uncertainty_example = {
+    "a share, or a quantity of the same kind as the value,", "3", "%"};
 constexpr const char* accepted_ph = "a number such as 7.62, or text such as \"7.62 at 25 degC\"";
 
 /// Sections that later versions will read; refused, not ignored.
@@ -94,7 +93,7 @@ class PlantReader {
     if (!text) return std::nullopt;
     if (*text == "mg/L") return PpmMeaning::mg_per_litre;
     if (*text == "mg/kg") return PpmMeaning::mg_per_kg;
-    value.error(fmt::format("ppm cannot mean {}", quoted(*text)), expected);
+    value.error(fmt::format("ppm cannot mean {}", excerpt(*text)), expected);
     return std::nullopt;
   }
 
@@ -119,13 +118,11 @@ class PlantReader {
     }
     Analysis& to_fill = plant_.analysis;
     to_fill.stream_span = stream->key_span();
-    if (const auto temperature = stream->find("temperature")) {
-      if (const auto read = read_as<Temperature>(*temperature, temperature_example)) {
-        to_fill.temperature = *read;
-      }
-    } else {
-      stream->key_error("stream.temperature is missing",
-                        described(temperature_example) + "; every equilibrium depends on it");
+    const auto temperature = stream->require(
+        "temperature", described(temperature_example) + "; every equilibrium depends on it");
+    if (temperature) {
+      to_fill.temperature =
+          read_as<Temperature>(*temperature, temperature_example).value_or(to_fill.temperature);
     }
     if (const auto ph = stream->find("pH")) to_fill.ph = measured_ph(*ph);
     read_optional(*stream, "flow", flow_example, to_fill.flow);
@@ -172,7 +169,9 @@ class PlantReader {
       const std::size_t split = text.find(at);
       number = plain_number(std::string_view(text).substr(0, split));
       if (!number) {
-        value.error(fmt::format("{} is not a pH", quoted(text)), accepted_ph);
+        value.error(fmt::format("{} is not a pH", excerpt(text)),
+                    accepted_ph,
+                    text.find(',') == std::string::npos ? "" : "write a decimal point");
         return std::nullopt;
       }
       if (split != std::string::npos) {
@@ -262,7 +261,7 @@ class PlantReader {
   }
 
   void read_uncertainty(const TomlCursor& value, ReportedValue& reported) const {
-    const auto written = read_written(value, ppm_, {accepted_uncertainty, "3", "%"});
+    const auto written = read_written(value, ppm_, uncertainty_example);
     if (!written) return;
     const WrittenQuantity& of = reported.quantity;
     const bool has_other_basis = !written->basis.empty() && written->basis != of.basis;
@@ -272,10 +271,8 @@ class PlantReader {
       reported.relative_uncertainty = written->si_value;
     } else if (written->dimension != of.dimension || written->meaning != of.meaning ||
                has_other_basis) {
-      value.error(
-          fmt::format(
-              "the uncertainty of \"{}\" cannot be in \"{}\"", reported.text, written->unit),
-          accepted_uncertainty);
+      value.error(fmt::format("this uncertainty does not fit \"{}\"", reported.text),
+                  described(uncertainty_example));
     } else {
       reported.si_uncertainty = written->si_value;
     }

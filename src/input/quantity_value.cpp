@@ -23,9 +23,10 @@ std::optional<WrittenQuantity> read_written(const TomlCursor& value,
                                             std::optional<PpmMeaning> ppm,
                                             const QuantityExample& example) {
   if (value.is(TomlNode::Kind::number)) {
+    if (!value.number(described(example))) return std::nullopt;
     value.error(fmt::format("{} has no unit", value.path()),
                 described(example),
-                fmt::format("put number and unit in quotation marks: {} = \"{} {}\"",
+                fmt::format("put number and unit in quotation marks, such as {} = \"{} {}\"",
                             value.key(),
                             value.written(),
                             example.unit));

@@ -12,6 +12,7 @@
 #include <cmath>
 
 #include "input/file_text.hpp"
+#include "input/toml_slip.hpp"
 
 namespace ionledger {
 namespace {
@@ -29,7 +30,7 @@ bool is_bare_key(std::string_view key) {
 }
 
 std::string path_to(const std::string& parent, const std::string& key) {
-  const std::string step = is_bare_key(key) ? key : quoted(key);
+  const std::string step = is_bare_key(key) ? key : excerpt(key);
   return parent.empty() ? step : parent + "." + step;
 }
 
@@ -111,69 +112,22 @@ class Converter {
   std::vector<std::string_view> lines_;
 };
 
-std::string_view trimmed(std::string_view text) {
-  const std::size_t begin = text.find_first_not_of(" \t");
-  if (begin == std::string_view::npos) return {};
-  return text.substr(begin, text.find_last_not_of(" \t") - begin + 1);
-}
-
-/// The most frequent slips, recognised by the line they stand in.
-std::string remedy(std::string_view description, std::string_view line) {
-  const auto says = [&](std::string_view part) {
-    return description.find(part) != std::string_view::npos;
-  };
-  if (says("cannot redefine")) return "keep one of the two";
-  if (says("control character") && says("string")) return "close the text with a quotation mark";
-  if (says("dangling comma")) return "delete the comma before the brace";
-  for (const std::string_view mark : {"\u201C", "\u201D", "\u201E", "\u2018", "\u2019"}) {
-    if (line.find(mark) != std::string_view::npos) return "use straight quotation marks: \"";
-  }
-  const std::size_t equals = line.find('=');
-  const std::string_view key = trimmed(line.substr(0, equals));
-  if (equals == std::string_view::npos) {
-    return key.substr(0, 1) == "[" ? "" : "write it as: key = \"value\"";
-  }
-  if (says("expected '='") && !key.empty() && key.find('"') == std::string_view::npos) {
-    return fmt::format("put the key in quotation marks: \"{}\" = ...", key);
-  }
-  const std::string_view value = trimmed(line.substr(equals + 1));
-  const bool starts_as_number = value.find_first_of("+-.0123456789") == 0;
-  const bool has_more = value.find_first_not_of("+-.0123456789") != std::string_view::npos;
-  if (starts_as_number && has_more && value.find_first_of("\"'#{[,") == std::string_view::npos) {
-    return fmt::format("put the value in quotation marks: {} = \"{}\"", key, value);
-  }
-  if (value.empty()) return fmt::format("write a value after {} =, or delete the line", key);
-  return "";
-}
-
-/// The library's own sentence, with the path it puts last left out and duplicates in plain words.
+/// The library's error with what it is likely to be about.
 void refuse(const toml::parse_error& parse_error, std::string_view text, TomlFindings& findings) {
-  std::string_view description = parse_error.description();
   const auto position = parse_error.source().begin;
   const auto lines = lines_of(text);
   const std::size_t index = std::min<std::size_t>(position.line, lines.size());
-  const std::string_view line = index == 0 ? std::string_view() : trimmed(lines[index - 1]);
-  const std::string fix = remedy(description, line);
-
-  constexpr std::string_view preamble = "Error while parsing ";
-  if (description.substr(0, preamble.size()) == preamble) {
-    description.remove_prefix(std::min(description.find(": "), description.size() - 2) + 2);
-  }
-  std::string summary = fmt::format("this is not TOML: {}", description);
-  if (description.substr(0, 15) == "cannot redefine" &&
-      description.find('\'') < description.size()) {
-    const std::size_t quote = description.find('\'');
-    const std::string_view name =
-        description.substr(quote + 1, description.rfind('\'') - quote - 1);
-    summary = fmt::format("{} is given twice", quoted(name));
-  }
-  if (description.substr(0, 16) == "exceeded maximum") summary = "values are nested too deeply";
+  const std::string_view whole_line = index == 0 ? std::string_view() : lines[index - 1];
+  const std::string_view line = trimmed(whole_line);
+  const bool is_at_line_end =
+      byte_of_column(whole_line, static_cast<int>(position.column)) == whole_line.size();
+  const TomlSlip slip = explained(parse_error.description(), line, is_at_line_end);
   findings.error(static_cast<int>(position.line),
                  static_cast<int>(position.column),
-                 summary,
-                 line.empty() ? "" : quoted(line),
+                 slip.summary,
+                 line.empty() ? "" : excerpt(line),
                  "",
-                 fix);
+                 slip.fix);
 }
 
 std::string joined(const std::vector<std::string>& words) {
@@ -217,7 +171,7 @@ TomlCursor::TomlCursor(const TomlNode& node, std::string path, TomlFindings& fin
 std::string TomlCursor::written() const {
   switch (node_->kind) {
     case TomlNode::Kind::text:
-      return quoted(node_->text);
+      return excerpt(node_->text);
     case TomlNode::Kind::array:
       return "an array";
     case TomlNode::Kind::table:
@@ -300,7 +254,7 @@ void TomlCursor::key_error(std::string summary, std::string expected, std::strin
   findings_->error(node_->key_line,
                    node_->key_column,
                    std::move(summary),
-                   quoted(node_->key),
+                   excerpt(node_->key),
                    std::move(expected),
                    std::move(fix));
 }
@@ -378,8 +332,8 @@ void TomlCursor::refuse_unknown_keys() const {
     findings_->error(
         child.key_line,
         child.key_column,
-        fmt::format("unknown key {}", quoted(child.key)),
-        path_.empty() ? quoted(child.key) : fmt::format("{} in {}", quoted(child.key), path_),
+        fmt::format("unknown key {}", excerpt(child.key)),
+        path_.empty() ? excerpt(child.key) : fmt::format("{} in {}", excerpt(child.key), path_),
         "one of " + joined(asked_),
         nearest.empty() ? "" : fmt::format("did you mean \"{}\"?", nearest));
   }
