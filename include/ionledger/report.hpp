@@ -23,9 +23,11 @@ struct TextStyle {
 /// The object "ionledger/assessment/1"; numbers with 17 significant digits, null where not
 /// computed.
 [[nodiscard]] std::string json_report(const Assessment& assessment);
+/// The object "ionledger/balance/1", in the same manner.
+[[nodiscard]] std::string json_balance(const ReportBalance& balance, const std::string& title);
 
 /// What is inside the models; `topic` empty for the overview, else a species, mineral, gas,
-/// constituent or source key. Empty result: nothing of that name.
+/// constituent, activity model or source key. Empty result: nothing of that name.
 [[nodiscard]] std::string text_models(const Models& models,
                                       const std::string& topic,
                                       const TextStyle& style);

@@ -1,0 +1,37 @@
+// "ionledger assess": from a plant file to everything that follows from it.
+#include "app/commands.hpp"
+#include "app/exit_status.hpp"
+#include "app/files.hpp"
+#include "app/inputs.hpp"
+#include "app/terminal.hpp"
+#include "ionledger/assessment.hpp"
+#include "ionledger/equilibrium.hpp"
+#include "ionledger/report.hpp"
+
+namespace ionledger::app {
+
+int assess_command(const AssessOptions& options) {
+  Diagnostics diagnostics;
+  const std::optional<Inputs> inputs = load_inputs(options.file, options.models, diagnostics);
+  std::optional<ClosedStream> closed;
+  if (inputs) {
+    closed =
+        close_stream(inputs->stream, inputs->models.chemistry, inputs->activity_model, diagnostics);
+  }
+  complain(diagnostics);
+  if (!closed) return wrong_input;
+  if (closed->status != SolveStatus::converged) {
+    complain(shown_name(options.file) + ": no solution: " + closed->reason);
+    return no_solution;
+  }
+  Assessment assessment =
+      assess(inputs->stream, *closed, inputs->models.chemistry, inputs->activity_model);
+  assessment.title = inputs->plant.analysis.title;
+  if (options.json) return print(json_report(assessment));
+  TextStyle style;
+  style.colour = wants_colour();
+  style.all = options.all;
+  return print(text_report(assessment, style));
+}
+
+}  // namespace ionledger::app

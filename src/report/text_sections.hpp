@@ -1,0 +1,40 @@
+// The sections of the terminal report, each in a file of its own; text_report.cpp puts them in
+// order.
+#pragma once
+
+#include <string>
+
+#include "ionledger/assessment.hpp"
+#include "report/text_page.hpp"
+
+namespace ionledger {
+
+/// What a saturation index means in words. `near` when it does not tell which side of saturation
+/// the water is on.
+enum class Saturation { would_form, near, dissolves, unknown };
+
+/// Half width around 0 in which a saturation index decides nothing, at least: a measured pH is
+/// hardly known better than 0.1, and the index of a carbonate follows it one to one. The 95 %
+/// interval from the constant replaces it where that is wider.
+inline constexpr double narrowest_near_saturation = 0.10;
+[[nodiscard]] Saturation saturation_of(const MineralLine& mineral);
+
+/// "would form", "near saturation", "dissolves".
+[[nodiscard]] std::string words_for(Saturation saturation);
+
+/// Whether an imbalance in percent is within what the acceptance criterion allows.
+[[nodiscard]] bool is_accepted(double imbalance_percent, double accepted_percent);
+
+/// True when hydrogen took up the whole imbalance, so that the balance cannot test the analysis.
+[[nodiscard]] bool balance_was_spent_on_ph(const AssessedState& state);
+
+void print_ledger(TextPage& page, const AssessedState& state);
+void print_minerals(TextPage& page, const AssessedState& state);
+void print_species(TextPage& page, const AssessedState& state);
+void print_gases(TextPage& page, const AssessedState& state);
+
+/// Cautions of an assessment or of a balance; `has_authority` adds the line about whose word
+/// counts.
+void print_cautions(TextPage& page, const std::vector<Caution>& cautions, bool has_authority);
+
+}  // namespace ionledger
