@@ -55,22 +55,46 @@ struct ActivityTerm {
   }
 };
 
-/// The three numbers of a species of charge `charge_number`.
-/// Range: I >= 0; every form returns exactly 0 at I = 0 when used in ln_activity_coefficient.
+/// The three numbers of a species of charge `charge_number`, with A and B from `slopes`:
+///
+///     form                     debye        size    linear
+///     davies                   ln10 A z^2   1       ln10 A z^2 b
+///     extended_debye_hueckel   ln10 A z^2   B size  0
+///     truesdell_jones          ln10 A z^2   B size  ln10 b
+///     neutral                  0            0       ln10 b
+///
+/// Units   A in (kg/mol)^(1/2), decadic; B in (kg/mol)^(1/2) per ångström; b in kg/mol.
+/// Range   any; NaN slopes (temperature outside 0..150 degC) give NaN for all forms but neutral.
+/// Sources C. W. Davies, Ion Association, Butterworths, London, 1962; P. Debye and E. Hückel,
+///         Phys. Z. 24 (1923) 185-206; A. H. Truesdell and B. F. Jones, J. Res. US Geol. Survey 2
+///         (1974) 233-248. The parameters are data: models/activity.toml.
 [[nodiscard]] ActivityTerm activity_term(const ActivityParameters& parameters,
                                          int charge_number,
                                          const DebyeHueckelSlopes& slopes);
 
-/// Which parameters `model` gives to `species`: its own entry; else neutrals, pairs or ions.
+/// Which parameters `model` gives to `species`: its own entry; else `neutrals` for charge 0,
+/// `pairs` for a charged pair, `ions` for the rest. The reference points into `model`.
 [[nodiscard]] const ActivityParameters& parameters_of(const ActivityModel& model,
                                                       const Species& species);
 
-/// Terms of every species of `chemistry`, in its order, at `temperature`.
+/// Terms of every species of `chemistry`, in its order (n_species), at `temperature`; range as in
+/// activity_term.
 [[nodiscard]] std::vector<ActivityTerm> activity_terms(const ActivityModel& model,
                                                        const Chemistry& chemistry,
                                                        Temperature temperature);
 
-/// ln(gamma), molality scale. Ionic strength in mol per kg of water, >= 0 (asserted).
+/// Tested bound on the rounding of ln_activity_coefficient, relative to the larger of its two
+/// parts.
+inline constexpr double ln_activity_coefficient_error = 2e-15;
+
+/// ln(gamma), molality scale: the natural logarithm of the activity coefficient, dimensionless.
+///
+///     ln(gamma) = -debye sqrt(I)/(1 + size sqrt(I)) + linear I
+///
+/// Units   I in mol per kg of water.
+/// Range   I >= 0 (asserted). Beyond ActivityModel::max_ionic_strength_molal the formula is still
+///         evaluated; the caller cautions.
+/// Limits  I = 0 returns 0 exactly.
 [[nodiscard]] double ln_activity_coefficient(const ActivityTerm& term,
                                              double ionic_strength_molal) noexcept;
 
