@@ -27,6 +27,8 @@ Json charge_of(const AssessedState& state) {
           {"anions_eq_per_kg", state.anions_eq_per_kg},
           {"imbalance_eq_per_kg", state.imbalance_eq_per_kg},
           {"imbalance_percent", state.imbalance_percent},
+          {"reported_imbalance_eq_per_kg", state.reported_imbalance_eq_per_kg},
+          {"reported_imbalance_percent", state.reported_imbalance_percent},
           {"accepted_imbalance_percent", state.accepted_imbalance_percent},
           {"closed_by", state.closed_by},
           {"closing_change_mol_per_kg", state.closing_change_mol_per_kg},
