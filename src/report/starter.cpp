@@ -13,8 +13,8 @@ title = "Quillmere board mill, well water"
 # ppm_means = "mg/L"
 
 [model]
-# How activity coefficients are computed. "ionledger models" lists what there is.
-activity = "davies"
+# How activity coefficients are computed; "ionledger models" lists what there is. This is the default.
+activity = "truesdell-jones"
 
 [stream]
 temperature = "18 degC"           # of the water in the plant

@@ -1,38 +1,14 @@
-// Decoding UTF-8 and counting columns.
+// Counting columns, cutting and wrapping.
 #include "report/terminal_text.hpp"
 
 #include <algorithm>
 #include <array>
 #include <cstddef>
 
+#include "diagnostic/printable.hpp"
+
 namespace ionledger {
 namespace {
-
-constexpr char32_t not_a_character = 0xFFFD;
-
-/// The code point at the start of `text` (not empty) and its length in bytes; U+FFFD and 1 where
-/// the bytes are not UTF-8.
-struct Decoded {
-  char32_t code_point = not_a_character;
-  std::size_t bytes = 1;
-};
-
-Decoded decode(std::string_view text) {
-  const auto byte = [&](std::size_t i) { return static_cast<unsigned char>(text[i]); };
-  const unsigned lead = byte(0);
-  if (lead < 0x80) return {lead, 1};
-  const std::size_t length = lead >= 0xF0 ? 4 : lead >= 0xE0 ? 3 : 2;
-  if (lead < 0xC2 || lead > 0xF4 || length > text.size()) return {};
-  char32_t code_point = lead & (0xFFu >> (length + 1));
-  for (std::size_t i = 1; i < length; ++i) {
-    if ((byte(i) & 0xC0u) != 0x80u) return {};
-    code_point = (code_point << 6) | (byte(i) & 0x3Fu);
-  }
-  constexpr std::array<char32_t, 5> smallest = {0, 0, 0x80, 0x800, 0x10000};
-  const bool is_surrogate = code_point >= 0xD800 && code_point <= 0xDFFF;
-  if (code_point < smallest[length] || code_point > 0x10FFFF || is_surrogate) return {};
-  return {code_point, length};
-}
 
 struct Range {
   char32_t first, last;
@@ -46,14 +22,16 @@ bool is_in(const std::array<Range, N>& ranges, char32_t code_point) {
 }
 
 // Unicode 15, the blocks whose characters have General Category Mn or Cf and turn up in names.
-constexpr std::array<Range, 8> without_width = {{{0x0300, 0x036F},
-                                                 {0x0483, 0x0489},
-                                                 {0x0591, 0x05BD},
-                                                 {0x064B, 0x065F},
-                                                 {0x200B, 0x200D},
-                                                 {0x20D0, 0x20F0},
-                                                 {0xFE00, 0xFE0F},
-                                                 {0xFE20, 0xFE2F}}};
+constexpr std::array<Range, 10> without_width = {{{0x0300, 0x036F},
+                                                  {0x0483, 0x0489},
+                                                  {0x0591, 0x05BD},
+                                                  {0x064B, 0x065F},
+                                                  {0x200B, 0x200F},
+                                                  {0x202A, 0x202E},
+                                                  {0x2060, 0x206F},
+                                                  {0x20D0, 0x20F0},
+                                                  {0xFE00, 0xFE0F},
+                                                  {0xFE20, 0xFE2F}}};
 
 // Unicode 15, East Asian Width W and F, by block.
 constexpr std::array<Range, 11> wide = {{{0x1100, 0x115F},
@@ -68,14 +46,6 @@ constexpr std::array<Range, 11> wide = {{{0x1100, 0x115F},
                                          {0xFFE0, 0xFFE6},
                                          {0x1F300, 0x3FFFD}}};
 
-// What a terminal obeys instead of showing: C0 and C1 controls, direction marks and overrides.
-constexpr std::array<Range, 6> commands = {{{0x00, 0x1F},
-                                            {0x7F, 0x9F},
-                                            {0x200E, 0x200F},
-                                            {0x2028, 0x202E},
-                                            {0x2060, 0x206F},
-                                            {0xFEFF, 0xFEFF}}};
-
 int width_of(char32_t code_point) {
   if (is_in(without_width, code_point)) return 0;
   return is_in(wide, code_point) ? 2 : 1;
@@ -85,10 +55,10 @@ int width_of(char32_t code_point) {
 std::size_t fitting_bytes(std::string_view text, int columns) {
   std::size_t bytes = 0;
   for (int used = 0; bytes < text.size();) {
-    const Decoded next = decode(text.substr(bytes));
-    used += width_of(next.code_point);
+    const CodePoint next = code_point_at(text, bytes);
+    used += width_of(next.value);
     if (used > columns) break;
-    bytes += next.bytes;
+    bytes += next.length;
   }
   return bytes;
 }
@@ -101,29 +71,12 @@ std::string blanks(int count) {
 
 int display_width(std::string_view text) {
   int width = 0;
-  while (!text.empty()) {
-    const Decoded next = decode(text);
-    width += width_of(next.code_point);
-    text.remove_prefix(next.bytes);
+  for (std::size_t i = 0; i < text.size();) {
+    const CodePoint next = code_point_at(text, i);
+    width += width_of(next.value);
+    i += next.length;
   }
   return width;
-}
-
-std::string printable(std::string_view text) {
-  std::string result;
-  while (!text.empty()) {
-    const Decoded next = decode(text);
-    const char first = text.front();
-    if (first == '\n' || first == '\r' || first == '\t') {
-      result += ' ';
-    } else if (next.code_point == not_a_character || is_in(commands, next.code_point)) {
-      result += "\uFFFD";
-    } else {
-      result += text.substr(0, next.bytes);
-    }
-    text.remove_prefix(next.bytes);
-  }
-  return result;
 }
 
 std::string clipped(std::string_view text, int columns) {
@@ -152,7 +105,8 @@ std::vector<std::string> wrapped(std::string_view text, int columns) {
     if (!line.empty()) lines.emplace_back();
     while (display_width(word) > columns) {
       // A single character wider than the line still has to go somewhere.
-      const std::size_t bytes = std::max(fitting_bytes(word, columns), decode(word).bytes);
+      const std::size_t bytes =
+          std::max(fitting_bytes(word, columns), code_point_at(word, 0).length);
       lines.back() = word.substr(0, bytes);
       word.remove_prefix(bytes);
       if (!word.empty()) lines.emplace_back();

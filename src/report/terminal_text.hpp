@@ -9,12 +9,8 @@
 namespace ionledger {
 
 /// Columns `text` takes in a terminal: combining marks 0, East Asian wide characters and emoji 2,
-/// everything else 1. Expects printable text (see below).
+/// everything else 1. Expects text made printable (diagnostic/printable.hpp).
 [[nodiscard]] int display_width(std::string_view text);
-
-/// `text` with control characters, direction overrides and bytes that are not UTF-8 replaced by
-/// U+FFFD, line breaks and tabs by a space: a title cannot move the cursor or switch colours.
-[[nodiscard]] std::string printable(std::string_view text);
 
 /// At most `columns` columns of `text`; a cut is shown by a last "…".
 [[nodiscard]] std::string clipped(std::string_view text, int columns);

@@ -28,7 +28,7 @@ std::string temperature_dependence(const EquilibriumConstant& constant) {
 
 std::string uncertainty_text(const EquilibriumConstant& constant) {
   return "±" + fixed_text(half_width_95 * constant.uncertainty, 3) + " in log10 K (95 %), " +
-         (constant.uncertainty_is_estimated ? "estimated here" : "as published");
+         (constant.uncertainty_is_estimated ? "estimated here" : "from the source");
 }
 
 }  // namespace

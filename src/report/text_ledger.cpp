@@ -155,23 +155,23 @@ TextTable column(const std::string& name, const Side& side, const Scale& scale, 
   return table;
 }
 
-/// What the analysis said before anything gave way, and what gave way.
-void print_verdict_on_balance(TextPage& page, const AssessedState& state) {
+void print_gap(TextPage& page, const AssessedState& state, const std::string& gap) {
+  std::string text = "cations \u2212 anions = " + gap;
   if (balance_was_spent_on_ph(state)) {
-    page.paragraph("The pH was taken from this balance, so it cannot test the analysis.");
+    page.paragraph(text + ". The pH was taken from this balance, so it cannot test the analysis.");
     return;
   }
-  const bool accepted = is_accepted(state.imbalance_percent, state.accepted_imbalance_percent);
-  page.paragraph("As reported: " + signed_text(state.imbalance_eq_per_kg * 1e3, 3) + " meq/kg, " +
-                     signed_text(state.imbalance_percent, 2) +
-                     " % of both sums together. Accepted: ±" +
-                     fixed_text(state.accepted_imbalance_percent, 2) + " %.",
-                 2,
-                 accepted ? Ink::plain : Ink::alarm);
   if (!state.closed_by.empty()) {
-    page.paragraph("To close it, " + state.closed_by + " was changed by " +
-                   signed_text(state.closing_change_mol_per_kg * 1e3, 3) + " mmol/kg.");
+    text += ", after " + state.closed_by + " was changed by " +
+            signed_text(state.closing_change_mol_per_kg * 1e3, 3) +
+            " mmol/kg. As reported it was " +
+            signed_text(state.reported_imbalance_eq_per_kg * 1e3, 3) + " meq/kg";
   }
+  text += ", " + signed_text(state.reported_imbalance_percent, 2) + " % of both sums; accepted: ±" +
+          fixed_text(state.accepted_imbalance_percent, 2) + " %.";
+  const bool accepted =
+      is_accepted(state.reported_imbalance_percent, state.accepted_imbalance_percent);
+  page.paragraph(text, 2, accepted ? Ink::strong : Ink::alarm);
 }
 
 }  // namespace
@@ -196,7 +196,7 @@ void print_ledger(TextPage& page, const AssessedState& state) {
       gap == 0 || is_accepted(100.0 * double(gap) / double(cations.sum + anions.sum),
                               state.accepted_imbalance_percent);
 
-  page.heading("Charge ledger", "charge × molality, per kg of water");
+  page.heading("Charge ledger", "charge × molality per kg of water, rounded to add up");
   const TextTable both = account(cations, anions, scale, closes);
   if (both.natural_width() <= page.width()) {
     both.print(page);
@@ -204,10 +204,7 @@ void print_ledger(TextPage& page, const AssessedState& state) {
     column("cations", cations, scale, closes).print(page);
     column("anions", anions, scale, closes).print(page);
   }
-  page.line({{"  cations \u2212 anions = "},
-             {(gap > 0 ? "+" : "") + scale.text(gap), Ink::strong},
-             {" " + scale.prefix + "eq/kg in this ledger"}});
-  print_verdict_on_balance(page, state);
+  print_gap(page, state, (gap > 0 ? "+" : "") + scale.text(gap) + " " + scale.prefix + "eq/kg");
 }
 
 }  // namespace ionledger

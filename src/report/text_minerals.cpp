@@ -41,10 +41,24 @@ std::string bar_of(double index) {
   return rest + end + solid + "│" + repeated(" ", bar_columns);
 }
 
-Ink ink_for(Saturation saturation) {
+std::string words_for(Saturation saturation, bool is_common_scale) {
   switch (saturation) {
     case Saturation::would_form:
-      return Ink::alarm;
+      return is_common_scale ? "would form" : "past saturation";
+    case Saturation::near:
+      return "near saturation";
+    case Saturation::dissolves:
+      return "dissolves";
+    case Saturation::unknown:
+      return "not known";
+  }
+  return "";
+}
+
+Ink ink_for(Saturation saturation, bool is_common_scale) {
+  switch (saturation) {
+    case Saturation::would_form:
+      return is_common_scale ? Ink::alarm : Ink::plain;
     case Saturation::near:
       return Ink::watch;
     case Saturation::dissolves:
@@ -56,12 +70,12 @@ Ink ink_for(Saturation saturation) {
 
 void add_mineral(TextTable& table, const MineralLine& mineral) {
   const Saturation saturation = saturation_of(mineral);
-  const Ink ink = ink_for(saturation);
+  const Ink ink = ink_for(saturation, mineral.is_common_scale);
   table.row({{mineral.mineral, Ink::strong},
              {signed_text(mineral.saturation_index, 2), ink},
              {"±" + fixed_text(half_width_95 * mineral.uncertainty, 2), Ink::quiet},
              {bar_of(mineral.saturation_index), ink},
-             {words_for(saturation), ink}});
+             {words_for(saturation, mineral.is_common_scale), ink}});
   if (mineral.deposit_mol_per_kg > 0) {
     table.note("Deposited: " + significant_text(mineral.deposit_mol_per_kg * 1e3) + " mmol/kg.");
   }
@@ -100,20 +114,6 @@ Saturation saturation_of(const MineralLine& mineral) {
   const double undecided = std::max(narrowest_near_saturation, half_width_95 * mineral.uncertainty);
   if (std::abs(index) <= undecided) return Saturation::near;
   return index > 0 ? Saturation::would_form : Saturation::dissolves;
-}
-
-std::string words_for(Saturation saturation) {
-  switch (saturation) {
-    case Saturation::would_form:
-      return "would form";
-    case Saturation::near:
-      return "near saturation";
-    case Saturation::dissolves:
-      return "dissolves";
-    case Saturation::unknown:
-      return "not known";
-  }
-  return "";
 }
 
 void print_minerals(TextPage& page, const AssessedState& state) {

@@ -3,6 +3,7 @@
 
 #include <algorithm>
 
+#include "diagnostic/printable.hpp"
 #include "report/terminal_text.hpp"
 
 namespace ionledger {
@@ -32,18 +33,25 @@ constexpr std::string_view switch_off = "\x1b[0m";
 
 void TextPage::line(const std::vector<Piece>& pieces) {
   int free_columns = width();
-  std::string rendered;
+  std::vector<Piece> fitting;
   for (const Piece& piece : pieces) {
-    if (free_columns <= 0) break;
-    const std::string text = clipped(printable(piece.text), free_columns);
-    free_columns -= display_width(text);
-    const bool is_coloured = style_.colour && piece.ink != Ink::plain && !text.empty();
-    if (is_coloured) rendered += switch_on(piece.ink);
-    rendered += text;
-    if (is_coloured) rendered += switch_off;
+    fitting.push_back({clipped(printable(piece.text), free_columns), piece.ink});
+    free_columns -= display_width(fitting.back().text);
   }
-  rendered.erase(rendered.find_last_not_of(' ') + 1);
-  text_ += rendered + '\n';
+  // No blanks at the end of a line, and none coloured there either.
+  while (!fitting.empty()) {
+    std::string& last = fitting.back().text;
+    last.erase(last.find_last_not_of(' ') + 1);
+    if (!last.empty()) break;
+    fitting.pop_back();
+  }
+  for (const Piece& piece : fitting) {
+    const bool is_coloured = style_.colour && piece.ink != Ink::plain && !piece.text.empty();
+    if (is_coloured) text_ += switch_on(piece.ink);
+    text_ += piece.text;
+    if (is_coloured) text_ += switch_off;
+  }
+  text_ += '\n';
 }
 
 void TextPage::paragraph(std::string_view text, int indent, Ink ink) {
@@ -67,7 +75,7 @@ void TextPage::heading(const std::string& title, const std::string& note) {
   const std::string tail = note.empty() ? "" : " " + printable(note);
   const int free_columns = width() - display_width(name) - 1;
   const int rule_columns = free_columns - display_width(tail);
-  blank();
+  if (!text_.empty()) blank();
   // A note that leaves no room for a rule goes below.
   if (rule_columns >= 3) {
     line({{name, Ink::strong}, {" " + repeated("─", rule_columns) + tail, Ink::quiet}});

@@ -41,7 +41,8 @@ class TextPage {
   /// A label in a column of its own, the text wrapped beside it.
   void labelled(const std::string& label, std::string_view text, Ink ink = Ink::plain);
 
-  /// A blank line, then the title, a rule and at its end a short note such as the unit.
+  /// A blank line unless it is the first, then the title, a rule and at its end a short note such
+  /// as the unit.
   void heading(const std::string& title, const std::string& note = {});
 
   /// A rule across the page, single or double.

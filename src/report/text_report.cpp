@@ -21,9 +21,9 @@ Verdict verdict_on_analysis(const AssessedState& state) {
   if (balance_was_spent_on_ph(state)) {
     return {"not tested: the charge balance was used to find the pH", Ink::watch};
   }
-  const std::string gap = signed_text(state.imbalance_percent, 2) + " %, accepted ±" +
+  const std::string gap = signed_text(state.reported_imbalance_percent, 2) + " %, accepted ±" +
                           fixed_text(state.accepted_imbalance_percent, 2) + " %";
-  if (is_accepted(state.imbalance_percent, state.accepted_imbalance_percent)) {
+  if (is_accepted(state.reported_imbalance_percent, state.accepted_imbalance_percent)) {
     return {"balances: " + gap, Ink::plain};
   }
   return {"does not balance: " + gap + "; find out why first", Ink::alarm};
@@ -73,7 +73,7 @@ void print_title(TextPage& page, const Assessment& assessment, const AssessedSta
               Ink::quiet}});
   page.rule(true);
   const auto one_line = [&](const std::string& label, const Verdict& verdict) {
-    page.line({{padded_right("  " + label, 12), Ink::quiet}, {verdict.text, verdict.ink}});
+    page.line({{padded_right("  " + label, 13), Ink::quiet}, {verdict.text, verdict.ink}});
   };
   one_line("Analysis", verdict_on_analysis(state));
   one_line("Scale", verdict_on_scale(state));
@@ -95,14 +95,23 @@ std::string ph_text(const AssessedState& state) {
   return ph + " from " + state.ph_from + (measured.empty() ? "" : "; " + measured);
 }
 
+/// In equivalents, and as the laboratory wrote it or would have written it.
+std::string alkalinity_text(const AssessedState& state) {
+  std::string text = significant_text(state.alkalinity_eq_per_kg * 1e3) + " meq/kg of water";
+  for (const TotalLine& total : state.totals) {
+    if (total.constituent != "alkalinity") continue;
+    text += ", " + significant_text(total.mg_per_l) + " mg/L as " + total.as_formula;
+  }
+  return text;
+}
+
 void print_essentials(TextPage& page, const AssessedState& state) {
   page.heading("Essentials");
   page.labelled("pH", ph_text(state), Ink::strong);
   page.labelled("ionic strength", significant_text(state.ionic_strength) + " mol/kg of water");
   page.labelled("water activity", fixed_text(state.water_activity, 4));
   page.labelled("density", fixed_text(state.density_kg_per_l, 4) + " kg/L");
-  page.labelled("alkalinity",
-                significant_text(state.alkalinity_eq_per_kg * 1e3) + " meq/kg of water");
+  page.labelled("alkalinity", alkalinity_text(state));
   page.labelled(
       "conductivity",
       state.measured_conductivity_us_cm
@@ -112,7 +121,7 @@ void print_essentials(TextPage& page, const AssessedState& state) {
 
 void print_totals(TextPage& page, const AssessedState& state) {
   if (state.totals.empty()) return;
-  page.heading("What the laboratory wrote", "and what it was taken for");
+  page.heading("What the laboratory wrote", "alkalinity and hardness in meq/kg");
   TextTable table({{"constituent", Align::left, true},
                    {"as written", Align::left, true},
                    {"mmol/kg", Align::right},
@@ -141,7 +150,6 @@ void print_record(TextPage& page, const Assessment& assessment, const Certificat
                 assessment.activity_model + ": " + assessment.activity_title +
                     "; trusted by its authors up to " +
                     significant_text(assessment.max_ionic_strength, 2) + " mol/kg");
-  page.labelled("data", assessment.digest);
   std::string how = certificate.converged ? "converged" : "not converged";
   how +=
       " in " + counted(std::size_t(std::max(certificate.iterations, 0)), "iteration", "iterations");
@@ -151,9 +159,7 @@ void print_record(TextPage& page, const Assessment& assessment, const Certificat
   how += ", charge " + scientific_text(certificate.charge_residual, 1) + ", ionic strength " +
          scientific_text(certificate.ionic_strength_residual, 1);
   page.labelled("solution", how, certificate.converged ? Ink::plain : Ink::alarm);
-  if (certificate.may_have_other_solutions) {
-    page.labelled("", "A second solution at another ionic strength is not ruled out.", Ink::watch);
-  }
+  page.paragraph(assessment.digest, 2, Ink::quiet);
 }
 
 }  // namespace

@@ -19,9 +19,6 @@ enum class Saturation { would_form, near, dissolves, unknown };
 inline constexpr double narrowest_near_saturation = 0.10;
 [[nodiscard]] Saturation saturation_of(const MineralLine& mineral);
 
-/// "would form", "near saturation", "dissolves".
-[[nodiscard]] std::string words_for(Saturation saturation);
-
 /// Whether an imbalance in percent is within what the acceptance criterion allows.
 [[nodiscard]] bool is_accepted(double imbalance_percent, double accepted_percent);
 

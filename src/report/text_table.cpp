@@ -5,6 +5,7 @@
 #include <cstddef>
 #include <numeric>
 
+#include "diagnostic/printable.hpp"
 #include "report/terminal_text.hpp"
 
 namespace ionledger {

@@ -143,7 +143,7 @@ bool print_constituent_topic(TextPage& page, const Models& models, const std::st
   page.labelled("means", kind_text(constituent));
   print_names(page, "also written", constituent.symbols);
   page.labelled("mg/L alone means",
-                constituent.plain.empty() ? "nothing yet: say \"as\" and one of the formulas below"
+                constituent.plain.empty() ? "nothing: \"as\" and a formula must be said"
                                           : "mg/L as " + constituent.plain);
   std::vector<std::string> formulas;
   for (const auto& [formula, moles] : constituent.as) formulas.push_back(formula);
