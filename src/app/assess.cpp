@@ -24,9 +24,8 @@ int assess_command(const AssessOptions& options) {
     complain(shown_name(options.file) + ": no solution: " + closed->reason);
     return no_solution;
   }
-  Assessment assessment =
+  const Assessment assessment =
       assess(inputs->stream, *closed, inputs->models.chemistry, inputs->activity_model);
-  assessment.title = inputs->plant.analysis.title;
   if (options.json) return print(json_report(assessment));
   TextStyle style;
   style.colour = wants_colour();

@@ -14,7 +14,7 @@ int check_command(const CheckOptions& options) {
   complain(diagnostics);
   if (!inputs) return wrong_input;
   const ReportBalance balance = balance_of_report(inputs->stream, inputs->models.chemistry);
-  const std::string& title = inputs->plant.analysis.title;
+  const std::string& title = inputs->stream.name;
   if (options.json) return print(json_balance(balance, title));
   TextStyle style;
   style.colour = wants_colour();

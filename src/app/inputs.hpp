@@ -16,7 +16,6 @@ namespace ionledger::app {
 /// A plant file with everything needed to work on it.
 struct Inputs {
   Models models;
-  PlantFile plant;
   Stream stream;
   ActivityModel activity_model;
 };

@@ -8,7 +8,7 @@
 namespace ionledger::app {
 
 /// True when standard output is a terminal that shows colour and nobody asked for none (NO_COLOR
-/// set to anything, or TERM=dumb).
+/// not empty, or TERM=dumb).
 [[nodiscard]] bool wants_colour();
 
 /// Writes to standard output; `done`, or `wrong_input` with a message when that fails. A reader
