@@ -10,6 +10,7 @@ namespace ionledger::solver {
 namespace {
 
 constexpr double dependent = 1e-9;      ///< Pivots are ratios of small whole numbers.
+constexpr double cancellation = 1e-30;  ///< Rounding of a sum in twice the working precision.
 constexpr double largest_whole = 9e15;  ///< Whole numbers below are exact in a double.
 
 }  // namespace
@@ -119,13 +120,17 @@ void transform_totals(const Prepared& prepared, const Basis& basis, std::vector<
   const double* const matrix = by_numerator ? basis.numerator.data() : basis.inverse.data();
   for (std::size_t i = 0; i < n; ++i) {
     TwoSum sum;
+    double size = 0;
     for (std::size_t k = 0; k < n; ++k) {
       const double factor = matrix[k * n + i];
       if (factor == 0 || prepared.rows[k] != Prepared::Row::balanced) continue;
       sum.add_product(factor, prepared.total[k]);
+      size += std::abs(factor * prepared.total[k]);
       sum.add(factor * prepared.total_low[k]);
     }
-    result[i] = sum.value() / basis.denominator;
+    // What is left of terms that cancel to the last digit of the sum is 0.
+    const bool cancelled = std::abs(sum.value()) <= cancellation * size;
+    result[i] = cancelled ? 0 : sum.value() / basis.denominator;
   }
 }
 
