@@ -151,6 +151,19 @@ void read_reaction_of(TomlCursor& table, const std::string& file, Entry& entry, 
   entry.constant = read_constant(table, draft);
 }
 
+/// The pressure that can hurt and what it does: both or neither.
+void read_caution(TomlCursor& table, Gas& gas) {
+  const char* const expected_pressure = "a pressure in bar, above zero";
+  const char* const expected_caution = "what the gas can do above caution_above_bar";
+  if (!table.has("caution_above_bar") && !table.has("caution")) return;
+  gas.caution_above_bar = table.number_at("caution_above_bar", expected_pressure);
+  gas.caution = table.text_at("caution", expected_caution);
+  const auto pressure = table.find("caution_above_bar");
+  if (pressure && gas.caution_above_bar <= 0) {
+    pressure->error("this pressure is not above zero", expected_pressure);
+  }
+}
+
 /// Name and charge of the species that `table` defines.
 Species named_species(TomlCursor& table, const std::string& file) {
   Species species;
@@ -215,6 +228,7 @@ void read_gas(TomlCursor& table, const std::string& file, ModelDraft& draft) {
   gas.formula = table.text_at("formula", "such as \"CO2\"");
   read_reaction_of(table, file, gas, draft);
   gas.bar_per_unit = one_of(table, "pressure_unit", units).bar;
+  read_caution(table, gas);
   table.refuse_unknown_keys();
   if (draft.define("gas", gas.name, table)) draft.models.chemistry.gases.push_back(std::move(gas));
 }

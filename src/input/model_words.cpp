@@ -47,6 +47,7 @@ void read_constituent(TomlCursor& table, ModelDraft& draft) {
   if (constituent.equivalents < 0) {
     table.find("equivalents")->error("equivalents are negative", "zero or more");
   }
+  constituent.is_major = table.flag("is_major", false);
   const char* const expected_as = "a table such as { Ca = 1, CaCO3 = 1 }";
   auto as = table.require("as", expected_as);
   if (as && as->must_be_table()) {

@@ -1,0 +1,65 @@
+// Every file of tests/bad_inputs holds one mistake (or as many as its name says) and stands beside
+// exactly what the program says about it.
+#include <doctest/doctest.h>
+
+#include <algorithm>
+#include <filesystem>
+#include <fstream>
+#include <sstream>
+#include <string>
+#include <vector>
+
+#include "ionledger/readers.hpp"
+#include "ionledger/stream.hpp"
+#include "support/water.hpp"
+
+namespace ionledger::testing {
+namespace {
+
+namespace fs = std::filesystem;
+
+const fs::path folder = fs::path(IONLEDGER_SOURCE_DIR) / "tests" / "bad_inputs";
+
+std::string content(const fs::path& path) {
+  std::ifstream file(path, std::ios::binary);
+  std::stringstream text;
+  text << file.rdbuf();
+  return text.str();
+}
+
+std::vector<fs::path> bad_inputs() {
+  std::vector<fs::path> paths;
+  for (const auto& entry : fs::directory_iterator(folder)) {
+    if (entry.path().extension() == ".toml") paths.push_back(entry.path());
+  }
+  std::sort(paths.begin(), paths.end());
+  return paths;
+}
+
+/// What is said about `path`: by the reader and, when that is content, by the chemistry.
+std::string messages(const fs::path& path) {
+  Diagnostics diagnostics;
+  const std::string name = "tests/bad_inputs/" + path.filename().string();
+  const auto plant = read_plant_file(content(path), name, diagnostics);
+  CHECK(plant.has_value() != diagnostics.has_errors());
+  if (plant) {
+    CHECK_FALSE_MESSAGE(make_stream(plant->analysis, models().chemistry, diagnostics),
+                        "nothing was found wrong in " << name);
+  }
+  return render(diagnostics);
+}
+
+}  // namespace
+
+TEST_SUITE("input/bad_inputs") {
+  TEST_CASE("every malformed plant file is refused in exactly the words beside it") {
+    const std::vector<fs::path> paths = bad_inputs();
+    CHECK(paths.size() >= 100);
+    for (const fs::path& path : paths) {
+      CAPTURE(path.filename().string());
+      CHECK(messages(path) == content(fs::path(path).replace_extension(".expected")));
+    }
+  }
+}
+
+}  // namespace ionledger::testing
