@@ -24,8 +24,8 @@ const QuantityExample density_example = {"a density", "1.02", "kg/L"};
 const QuantityExample concentration_example = {"a concentration", "96", "mg/L"};
 constexpr const char* accepted_concentrations =
     "mass per volume (\"96 mg/L\"), amount per volume (\"2.4 mmol/L\", \"4.8 meq/L\"), amount per "
-    "kg "
-    "of water (\"2.4 mmol/kg\", \"4.8 meq/kg\") or mass fraction (\"96 mg/kg\", \"3 % by mass\")";
+    "kg of water (\"2.4 mmol/kg\", \"4.8 meq/kg\") or mass fraction (\"96 mg/kg\", \"3 % by "
+    "mass\")";
 const QuantityExample uncertainty_example = {
     "a share, or a quantity of the same kind as the value,", "3", "%"};
 constexpr const char* accepted_ph = "a number such as 7.62, or text such as \"7.62 at 25 degC\"";
