@@ -11,6 +11,8 @@ constexpr int iterations_before_phases = 4;
 constexpr double saturation_tolerance = 1e-11;  ///< |ln Q - ln target| of a phase in equilibrium.
 constexpr double largest_solvent_step = 0.3;    ///< Of ln a_w.
 constexpr double smallest_ln_solvent = -4;
+/// Largest d I(c(I)) / d I taken at its word: above 1 a Newton step would run away from the root.
+constexpr double largest_slope = 0.7;
 
 /// A balance as two positive sides, plus = minus, so that its logarithm can be taken:
 /// sum over nu > 0 of nu c + max(-T, 0) against sum over nu < 0 of |nu| c + max(T, 0).
@@ -43,8 +45,12 @@ void sweep(
 }
 
 /// Right-hand side. A row without a phase uses -W ln(plus / minus), which is the logarithmic
-/// residual far away and the linear one close by; a row with one uses T - sum nu c.
-void fill_right_hand_side(const Kernel& kernel, const Prepared& prepared, FastWork& work) {
+/// residual far away and the linear one close by; a row with one uses T - sum nu c - sum nu n, so
+/// that the unknown is the change of n: large amounts would drown the small ones otherwise.
+void fill_right_hand_side(const Kernel& kernel,
+                          const Prepared& prepared,
+                          const Point& point,
+                          FastWork& work) {
   for (int i = 0; i < kernel.n_components; ++i) {
     work.step[i] = 0;
     if (prepared.rows[i] != Prepared::Row::balanced) {
@@ -59,6 +65,15 @@ void fill_right_hand_side(const Kernel& kernel, const Prepared& prepared, FastWo
     const double weight = (work.sums.squares[2 * i] + work.sums.squares[2 * i + 1]) *
                           inverse_log_slope(work.sums, sides, i);
     work.step[i] = -weight * std::log(sides.plus / sides.minus);
+  }
+  for (const int m : work.phases.members) {
+    const int column = kernel.n_species + m;
+    for (int e = kernel.begin[column]; e < kernel.begin[column + 1]; ++e) {
+      const int i = kernel.row[e];
+      if (prepared.rows[i] == Prepared::Row::balanced) {
+        work.step[i] -= kernel.nu[e] * point.amount[m];
+      }
+    }
   }
 }
 
@@ -125,11 +140,12 @@ Couplings couple(const Kernel& kernel, const Point& point, FastWork& work) {
   const double ionic_right =
       point.ionic_strength - sums.ionic - dot(sums.gradient_ionic, work.step);
   work.ionic_strength_slope = ionic_by_ionic;
+  const double a = std::min(ionic_by_ionic, largest_slope) - 1;
   const double smallest = -0.7 * point.ionic_strength;
   const double largest = std::max(2 * point.ionic_strength, 0.02) - point.ionic_strength;
   Couplings result;
   if (slope == 0) {
-    result.ionic = std::clamp(ionic_right / (ionic_by_ionic - 1), smallest, largest);
+    result.ionic = std::clamp(ionic_right / a, smallest, largest);
     return result;
   }
   const double ionic_by_solvent = sums.ionic_by_solvent - dot(sums.gradient_ionic, work.by_solvent);
@@ -140,7 +156,6 @@ Couplings couple(const Kernel& kernel, const Point& point, FastWork& work) {
       a_w + slope * (sums.solute_by_solvent - dot(sums.gradient_solvent, work.by_solvent));
   const double solvent_right =
       1 - a_w - slope * (sums.solute + dot(sums.gradient_solvent, work.step));
-  const double a = ionic_by_ionic - 1;
   const double determinant = a * solvent_by_solvent - ionic_by_solvent * solvent_by_ionic;
   const double ionic =
       (ionic_right * solvent_by_solvent - ionic_by_solvent * solvent_right) / determinant;
@@ -175,7 +190,7 @@ bool take_step(const Kernel& kernel,
       work.phase_by_solvent[a] = kernel.phase_solvent_exponent[m];
     }
   }
-  fill_right_hand_side(kernel, prepared, work);
+  fill_right_hand_side(kernel, prepared, point, work);
   solve_bordered(kernel, sums, work.phases, work.step.data(), work.phase_step.data());
   work.by_ionic = sums.border_ionic;
   solve_bordered(kernel, sums, work.phases, work.by_ionic.data(), work.phase_by_ionic.data());
@@ -198,17 +213,17 @@ bool take_step(const Kernel& kernel,
     point.x[i] += change;
     sums.activity[i] *= std::exp(change);
   }
-  point.ionic_strength += couplings.ionic;
-  point.ln_solvent += couplings.ln_solvent;
+  point.ionic_strength += fraction * couplings.ionic;
+  point.ln_solvent += fraction * couplings.ln_solvent;
   if (prepared.has_phases) {
     for (int m = 0; m < kernel.n_phases; ++m) {
       if (work.phases.active[m] == 0) point.amount[m] = 0;
     }
     for (std::size_t a = 0; a < work.phases.members.size(); ++a) {
       double& amount = point.amount[work.phases.members[a]];
-      double target = work.phase_step[a] - couplings.ionic * work.phase_by_ionic[a];
-      if (kernel.solvent_slope != 0) target -= couplings.ln_solvent * work.phase_by_solvent[a];
-      amount += fraction * (target - amount);
+      double change = work.phase_step[a] - couplings.ionic * work.phase_by_ionic[a];
+      if (kernel.solvent_slope != 0) change -= couplings.ln_solvent * work.phase_by_solvent[a];
+      amount += fraction * change;
     }
   }
   return true;

@@ -22,7 +22,7 @@ namespace {
 constexpr double infinity = std::numeric_limits<double>::infinity();
 constexpr double not_a_number = std::numeric_limits<double>::quiet_NaN();
 constexpr double default_ln_activity = -12;  ///< Where nothing better is known.
-constexpr double largest_start_ionic_strength = 0.5;
+constexpr double largest_start_ionic_strength = 100;
 constexpr double large_ionic_weight = 8;  ///< Charge 4: convexity over all I is no longer certain.
 constexpr double large_share = 0.1;       ///< Of the ionic strength.
 
