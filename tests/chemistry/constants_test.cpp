@@ -43,9 +43,9 @@ TEST_SUITE("chemistry/constants") {
       atoms["H"] -= 2 * species.water_exponent;
       atoms["O"] -= species.water_exponent;
       CHECK(charge == within(0, 1e-12));
-      for (const auto& [element, count] : atoms) {
-        CAPTURE(element);
-        CHECK(count == within(0, 1e-12));
+      for (const auto& atom : atoms) {
+        CAPTURE(atom.first);
+        CHECK(atom.second == within(0, 1e-12));
       }
     }
   }

@@ -73,7 +73,9 @@ const std::vector<Standard>& standards() {
 TEST_SUITE("published/ph_standards") {
   TEST_CASE("the default model gives the pH of every standard from its composition") {
     for (const Standard& standard : standards()) {
-      for (const auto& [degc, expected] : standard.ph_at) {
+      for (const auto& point : standard.ph_at) {
+        const double degc = point.first;
+        const double expected = point.second;
         CAPTURE(standard.name);
         CAPTURE(degc);
         const Solution solution = solved(standard.totals, degc, default_activity_model());
@@ -87,7 +89,9 @@ TEST_SUITE("published/ph_standards") {
     // coefficients of W. J. Hamer and Y.-C. Wu, J. Phys. Chem. Ref. Data 1 (1972) 1047.
     const std::vector<std::pair<double, double>> acids = {
         {0.001, 3.015}, {0.01, 2.0425}, {0.1, 1.0875}};
-    for (const auto& [molality, expected] : acids) {
+    for (const auto& point : acids) {
+      const double molality = point.first;
+      const double expected = point.second;
       CAPTURE(molality);
       CHECK(solved({{"Cl-", molality}}, 25, default_activity_model()).ph() ==
             within(expected, 0.02));

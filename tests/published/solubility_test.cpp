@@ -81,7 +81,9 @@ TEST_SUITE("published/solubility") {
                                                           {40, .0155},
                                                           {50, .0152},
                                                           {60, .0148}};
-    for (const auto& [degc, expected] : table) {
+    for (const auto& row : table) {
+      const double degc = row.first;
+      const double expected = row.second;
       CAPTURE(degc);
       CHECK(dissolve("gypsum", degc).amount == rel(expected, 0.035));
     }
