@@ -114,7 +114,8 @@ std::optional<Term> read_term(std::string_view text) {
     coefficient = whole;
     text = trimmed(text.substr(space));
   }
-  if (text.empty() || coefficient <= 0) return std::nullopt;
+  if (text.empty() || coefficient <= 0 || text.find(' ') != std::string_view::npos)
+    return std::nullopt;
   return Term{std::string(text), coefficient};
 }
 

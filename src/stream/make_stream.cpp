@@ -14,6 +14,7 @@ namespace ionledger {
 namespace {
 
 const Temperature laboratory_temperature = celsius(25.0);
+constexpr double most_kg_per_kg_water = 3;   // two thirds of solutes: no water any more
 constexpr double hardness_tolerance = 0.05;  // relative; common practice for a hardness check
 
 /// One understood line of the report.
@@ -194,7 +195,7 @@ class StreamMaker {
       volume = (b * (water_volume + v[water]) + v[solution] * (1 + mu[water])) / determinant;
       mass = (a * (1 + mu[water]) + mu[litre] * (water_volume + v[water])) / determinant;
     }
-    if (!(volume > 0) || !(mass >= 1) || !std::isfinite(volume) || mass > 1e3) {
+    if (!(volume > 0) || !(mass >= 1) || !std::isfinite(volume) || mass > most_kg_per_kg_water) {
       error(analysis_.stream_span,
             "the constituents leave no room for water",
             fmt::format("{} values in [analysis] that together outweigh the solution",

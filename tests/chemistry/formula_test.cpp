@@ -2,6 +2,8 @@
 
 #include <doctest/doctest.h>
 
+#include <string>
+
 #include "support/compare.hpp"
 
 namespace ionledger::testing {
@@ -20,7 +22,7 @@ TEST_SUITE("chemistry/formula") {
   }
   TEST_CASE("what is not a formula is refused") {
     for (const char* text : {"", "Xx", "Ca(OH", "CaOH)", "caco3", "Ca CO3", "((((((H))))))"}) {
-      CAPTURE(text);
+      CAPTURE(std::string(text));
       CHECK_FALSE(composition_of(text));
     }
   }
@@ -43,7 +45,7 @@ TEST_SUITE("chemistry/formula") {
   }
   TEST_CASE("what is not a reaction is refused") {
     for (const char* text : {"", "A", "A = ", " = B", "A = B = C", "0 A = B", "A + = B"}) {
-      CAPTURE(text);
+      CAPTURE(std::string(text));
       CHECK_FALSE(read_reaction(text));
     }
   }
