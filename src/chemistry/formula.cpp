@@ -114,8 +114,8 @@ std::optional<Term> read_term(std::string_view text) {
     coefficient = whole;
     text = trimmed(text.substr(space));
   }
-  if (text.empty() || coefficient <= 0 || text.find(' ') != std::string_view::npos)
-    return std::nullopt;
+  const bool dangles = text.size() >= 2 && text.substr(text.size() - 2) == " +";
+  if (text.empty() || coefficient <= 0 || dangles) return std::nullopt;
   return Term{std::string(text), coefficient};
 }
 
