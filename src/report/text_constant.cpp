@@ -34,7 +34,7 @@ std::string uncertainty_text(const EquilibriumConstant& constant) {
 }  // namespace
 
 std::string range_text(const TemperatureRange& range) {
-  return plain_text(range.low_degc) + " to " + plain_text(range.high_degc) + " °C";
+  return plain_text(range.low_degc) + " to " + plain_text(range.high_degc);
 }
 
 std::string function_text(const TemperatureFunction& f) {
@@ -99,7 +99,7 @@ void print_constant(TextPage& page,
     page.labelled("heat capacity",
                   plain_text(*constant.heat_capacity_j_per_mol_k) + " J/(mol K), of reaction");
   }
-  page.labelled("valid", range_text(constant.valid));
+  page.labelled("valid", range_text(constant.valid) + " °C");
   page.labelled("source", citation_of(chemistry.sources, constant.source));
   page.labelled("standing", standing_text(constant.standing));
   if (!constant.note.empty()) page.labelled("note", constant.note);

@@ -38,11 +38,11 @@ std::string half_width_of(const EquilibriumConstant& constant) {
 
 void print_minerals(TextPage& page, const Chemistry& chemistry) {
   page.heading("Minerals", "log10 K of dissolution at 25 °C; ± is 95 %");
-  TextTable table({{"mineral", Align::left, true},
+  TextTable table({{"mineral"},
                    {"formula", Align::left, true},
                    {"log10 K", Align::right},
                    {"±", Align::right},
-                   {"valid"},
+                   {"valid, °C"},
                    {""}});
   for (const Mineral& mineral : chemistry.minerals) {
     table.row({{mineral.name},
@@ -63,11 +63,11 @@ void print_species(TextPage& page, const Chemistry& chemistry) {
   }
   page.heading("Species", "log10 K at 25 °C of the reaction as published");
   page.paragraph("Basis: " + basis + ".");
-  TextTable table({{"species", Align::left},
+  TextTable table({{"species"},
                    {"reaction", Align::left, true},
                    {"log10 K", Align::right},
                    {"±", Align::right},
-                   {"valid"}});
+                   {"valid, °C"}});
   for (auto it = first + chemistry.n_basis; it != chemistry.species.end(); ++it) {
     table.row({{it->name},
                {it->reaction_text},
@@ -85,7 +85,7 @@ void print_gases(TextPage& page, const Chemistry& chemistry) {
                    {"log10 K", Align::right},
                    {"±", Align::right},
                    {"per"},
-                   {"valid"}});
+                   {"valid, °C"}});
   for (const Gas& gas : chemistry.gases) {
     table.row({{gas.name},
                {gas.formula},

@@ -1,6 +1,7 @@
 // The terminal report: verdict first, then what it rests on, the evidence last.
 #include <cmath>
 #include <cstddef>
+#include <set>
 
 #include "ionledger/report.hpp"
 #include "report/number_text.hpp"
@@ -57,11 +58,15 @@ Verdict verdict_on_scale(const AssessedState& state) {
 
 Verdict verdict_on_care(const AssessedState& state) {
   if (state.cautions.empty()) return {"the calculation raised no caution"};
-  std::string text = counted(state.cautions.size(), "caution", "cautions") + " below: ";
-  for (std::size_t i = 0; i < state.cautions.size(); ++i) {
-    text += (i == 0 ? "" : ", ") + state.cautions[i].about;
+  std::string subjects;
+  std::set<std::string> named;
+  for (const Caution& caution : state.cautions) {
+    if (named.insert(caution.about).second) {
+      subjects += (subjects.empty() ? "" : ", ") + caution.about;
+    }
   }
-  return {text, Ink::watch};
+  return {counted(state.cautions.size(), "caution", "cautions") + " below: " + subjects,
+          Ink::watch};
 }
 
 void print_title(TextPage& page, const Assessment& assessment, const AssessedState& state) {
@@ -80,19 +85,15 @@ void print_title(TextPage& page, const Assessment& assessment, const AssessedSta
   one_line("Take care", verdict_on_care(state));
 }
 
-std::string measured_ph_of(const AssessedState& state) {
-  std::string text = fixed_text(*state.measured_ph, 2) + " measured";
-  if (state.measured_ph_degc) text += " at " + plain_text(*state.measured_ph_degc) + " °C";
-  return text;
-}
-
 std::string ph_text(const AssessedState& state) {
-  const std::string ph = fixed_text(state.ph, 2);
-  const std::string measured = state.measured_ph ? measured_ph_of(state) : "";
-  if (state.ph_from == "measured") {
-    return measured.empty() ? ph + ", measured" : ph + " at this temperature, from " + measured;
-  }
-  return ph + " from " + state.ph_from + (measured.empty() ? "" : "; " + measured);
+  std::string text = fixed_text(state.ph, 2);
+  if (!state.measured_ph) return text + ", from " + state.ph_from;
+  const double degc = state.measured_ph_degc.value_or(state.temperature_degc);
+  const bool is_measured_here = plain_text(degc) == plain_text(state.temperature_degc);
+  const std::string measured =
+      fixed_text(*state.measured_ph, 2) + " measured at " + plain_text(degc) + " °C";
+  if (state.ph_from != "measured") return text + ", from " + state.ph_from + "; " + measured;
+  return is_measured_here ? text + ", measured" : text + " at this temperature; " + measured;
 }
 
 /// In equivalents, and as the laboratory wrote it or would have written it.
@@ -112,11 +113,10 @@ void print_essentials(TextPage& page, const AssessedState& state) {
   page.labelled("water activity", fixed_text(state.water_activity, 4));
   page.labelled("density", fixed_text(state.density_kg_per_l, 4) + " kg/L");
   page.labelled("alkalinity", alkalinity_text(state));
-  page.labelled(
-      "conductivity",
-      state.measured_conductivity_us_cm
-          ? significant_text(*state.measured_conductivity_us_cm, 4) + " µS/cm at 25 °C, measured"
-          : "not reported");
+  page.labelled("conductivity",
+                state.measured_conductivity_us_cm
+                    ? plain_text(*state.measured_conductivity_us_cm) + " µS/cm at 25 °C, measured"
+                    : "not reported");
 }
 
 void print_totals(TextPage& page, const AssessedState& state) {
@@ -139,7 +139,8 @@ void print_totals(TextPage& page, const AssessedState& state) {
   }
   table.print(page);
   if (derived > 0) {
-    page.paragraph("Derived: follows from pH, alkalinity or the charge balance.", 2, Ink::quiet);
+    page.paragraph(
+        "Derived: follows from the other values, the pH or the charge balance.", 2, Ink::quiet);
   }
 }
 

@@ -165,7 +165,7 @@ bool print_activity_topic(TextPage& page, const Models& models, const std::strin
   page.labelled("source", citation_of(models.chemistry.sources, model->source));
   if (!model->note.empty()) page.labelled("note", model->note);
   page.blank();
-  TextTable table({{"species", Align::left, true},
+  TextTable table({{"species"},
                    {"form"},
                    {"size, Å", Align::right},
                    {"b, kg/mol", Align::right},

@@ -8,7 +8,7 @@
 
 namespace ionledger {
 
-/// "0 to 90 °C".
+/// "0 to 90", degrees Celsius.
 [[nodiscard]] std::string range_text(const TemperatureRange& range);
 
 /// Each prints a page when `topic` names one of its kind and says whether it did.

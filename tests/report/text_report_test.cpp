@@ -169,6 +169,24 @@ TEST_SUITE("report/text_report") {
     CHECK(holds(text_report(assessment, {}), "after sodium was changed by"));
   }
 
+  TEST_CASE("The pH says where it comes from, and the temperature of the meter if it differs") {
+    Assessment assessment = example_assessment();
+    AssessedState& state = assessment.states[0];
+    CHECK(holds(text_report(assessment, {}), "8.25 at this temperature; 8.25 measured at 25 °C"));
+    state.measured_ph_degc = state.temperature_degc;
+    CHECK(holds(text_report(assessment, {}), "8.25, measured\n"));
+    state.ph_from = "alkalinity and inorganic carbon";
+    CHECK(holds(text_report(assessment, {}), "8.25, from alkalinity and inorganic carbon; 8.25"));
+    state.measured_ph.reset();
+    CHECK(holds(text_report(assessment, {}), "8.25, from alkalinity and inorganic carbon\n"));
+  }
+
+  TEST_CASE("A subject with two cautions is named once in the verdict") {
+    Assessment assessment = example_assessment();
+    assessment.states[0].cautions.push_back({"phosphate", "Third."});
+    CHECK(holds(text_report(assessment, {}), "3 cautions below: temperature, phosphate\n"));
+  }
+
   TEST_CASE("Minerals are named by what they would do") {
     const std::string text = text_report(example_assessment(), style(80, false, false));
     const auto lines = lines_of(text);
