@@ -130,8 +130,8 @@ struct WrittenQuantity {
   double number = 0;               ///< As written: 96.
   std::string unit;                ///< As written: "mg/L".
   std::string basis;               ///< Formula after "as", or empty: "CaCO3".
-  double si_value = 0;             ///< 0.096 for 96 mg/L; kelvin for an absolute temperature.
-  DimensionExponents dimension{};  ///< Of si_value.
+  double value_in_si = 0;          ///< 0.096 for 96 mg/L; kelvin for an absolute temperature.
+  DimensionExponents dimension{};  ///< Of value_in_si.
   Meaning meaning = Meaning::plain;
 };
 

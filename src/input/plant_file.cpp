@@ -253,7 +253,7 @@ class PlantReader {
     if (!is_accepted) {
       value.error(fmt::format("\"{}\" is not a unit of concentration", written->unit),
                   accepted_concentrations);
-    } else if (written->si_value < 0) {
+    } else if (written->value_in_si < 0) {
       value.error(fmt::format("{} is negative", value.path()), "zero or more");
       return false;
     }
@@ -265,16 +265,16 @@ class PlantReader {
     if (!written) return;
     const WrittenQuantity& of = reported.quantity;
     const bool has_other_basis = !written->basis.empty() && written->basis != of.basis;
-    if (written->si_value < 0) {
+    if (written->value_in_si < 0) {
       value.error(fmt::format("{} is negative", value.path()), "zero or more");
     } else if (written->meaning == Meaning::ratio) {
-      reported.relative_uncertainty = written->si_value;
+      reported.relative_uncertainty = written->value_in_si;
     } else if (written->dimension != of.dimension || written->meaning != of.meaning ||
                has_other_basis) {
       value.error(fmt::format("this uncertainty does not fit \"{}\"", reported.text),
                   described(uncertainty_example));
     } else {
-      reported.si_uncertainty = written->si_value;
+      reported.si_uncertainty = written->value_in_si;
     }
   }
 

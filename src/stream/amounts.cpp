@@ -41,7 +41,7 @@ class AmountReader {
   std::optional<Amount> read() {
     const WrittenQuantity& written = reported_.quantity;
     if (written.meaning == Meaning::mass_fraction) {
-      return mass(written.si_value, Per::kg_of_solution);
+      return mass(written.value_in_si, Per::kg_of_solution);
     }
     if (const auto v = si_value_as<AmountPerVolume>(written))
       return moles(*v * litre_m3, Per::litre);

@@ -242,9 +242,9 @@ class StreamMaker {
                                    : molality / stream_.litre_per_kg_water;
     conversion.mol_per_kg = molality;
     conversion.relative_uncertainty = entry.reported->relative_uncertainty;
-    if (entry.reported->si_uncertainty && entry.reported->quantity.si_value > 0) {
+    if (entry.reported->si_uncertainty && entry.reported->quantity.value_in_si > 0) {
       conversion.relative_uncertainty =
-          *entry.reported->si_uncertainty / entry.reported->quantity.si_value;
+          *entry.reported->si_uncertainty / entry.reported->quantity.value_in_si;
     }
     stream_.conversions.push_back(std::move(conversion));
     switch (entry.constituent->kind) {

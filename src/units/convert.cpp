@@ -34,11 +34,11 @@ constexpr Meaning wanted_meaning() {
 }
 
 template <class Q>
-Q from_si(double si_value) {
+Q from_si(double value_in_si) {
   if constexpr (is_share<Q>) {
-    return Q{si_value};
+    return Q{value_in_si};
   } else {
-    return Q::from_value(si_value);
+    return Q::from_value(value_in_si);
   }
 }
 
@@ -58,7 +58,7 @@ std::string advice(const WrittenQuantity& written, const Kind& found, const Kind
     return fmt::format("write \"{} % by mass\"", written.number);
   }
   if (wanted.meaning == Meaning::ratio && found.meaning == Meaning::mass_fraction) {
-    return fmt::format("write \"{} %\"", 100 * written.si_value);
+    return fmt::format("write \"{} %\"", 100 * written.value_in_si);
   }
   if (found.meaning == Meaning::absolute_temperature && wanted.dimension == found.dimension) {
     return "write the difference in kelvin: 9 degF of difference are 5 K";
@@ -88,7 +88,7 @@ std::variant<Q, UnitError> to(const WrittenQuantity& written) {
   constexpr Meaning meaning = wanted_meaning<Q>();
   const bool fits = written.meaning == meaning ||
                     (std::is_same_v<Q, TemperatureDifference> && is_kelvin(written));
-  if (fits && written.dimension == dimension) return from_si<Q>(written.si_value);
+  if (fits && written.dimension == dimension) return from_si<Q>(written.value_in_si);
   return mismatch(written, kind_of(dimension, meaning));
 }
 

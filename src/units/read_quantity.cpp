@@ -102,14 +102,14 @@ std::optional<UnitError> convert(const QuantityText& text,
                                  std::size_t begin,
                                  const UnitExpression& unit,
                                  WrittenQuantity& written) {
-  written.si_value = (written.number + unit.zero) * unit.factor;
-  if (written.meaning == Meaning::absolute_temperature && written.si_value < 0) {
+  written.value_in_si = (written.number + unit.zero) * unit.factor;
+  if (written.meaning == Meaning::absolute_temperature && written.value_in_si < 0) {
     return text.error(begin,
                       quoted(text.original()) + " is below absolute zero",
                       "at least 0 K, which is -273.15 degC or -459.67 degF");
   }
   const bool may_be_zero = written.number == 0 || unit.zero != 0;
-  if (std::isnormal(written.si_value) || (written.si_value == 0 && may_be_zero)) {
+  if (std::isnormal(written.value_in_si) || (written.value_in_si == 0 && may_be_zero)) {
     return std::nullopt;
   }
   return text.error(begin,

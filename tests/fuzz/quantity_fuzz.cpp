@@ -44,7 +44,7 @@ int try_as(const WrittenQuantity& written, std::string_view text) {
 
 /// A quantity is finite, of at most one type (a kelvin alone: two), and reads the same again.
 void check(const WrittenQuantity& written, std::string_view text) {
-  require(std::isfinite(written.number) && std::isfinite(written.si_value));
+  require(std::isfinite(written.number) && std::isfinite(written.value_in_si));
   require(!written.unit.empty());
   const int n_types =
       try_as<Temperature>(written, text) + try_as<TemperatureDifference>(written, text) +
@@ -61,7 +61,7 @@ void check(const WrittenQuantity& written, std::string_view text) {
   if (const auto* same = std::get_if<WrittenQuantity>(&one)) {
     require(same->unit == written.unit);
   } else {
-    require(!std::isnormal(written.si_value));
+    require(!std::isnormal(written.value_in_si));
   }
 }
 

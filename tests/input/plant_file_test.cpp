@@ -96,7 +96,7 @@ TEST_SUITE("input/plant_file") {
     CHECK(values[0].key == "sodium");
     CHECK(values[2].text == "212 mg/L as CaCO3");
     CHECK(values[2].quantity.basis == "CaCO3");
-    CHECK(values[2].quantity.si_value == rel(0.212, 1e-14));
+    CHECK(values[2].quantity.value_in_si == rel(0.212, 1e-14));
     CHECK(values[2].key_span.line == 18);
     CHECK(values[2].key_span.column == 1);
     CHECK(values[2].value_span.column == 14);
@@ -104,7 +104,7 @@ TEST_SUITE("input/plant_file") {
   }
 
   TEST_CASE("ppm is what ppm_means says") {
-    CHECK(read(mended()).analysis.values[0].quantity.si_value == rel(0.041, 1e-14));
+    CHECK(read(mended()).analysis.values[0].quantity.value_in_si == rel(0.041, 1e-14));
   }
 
   TEST_CASE("an uncertainty is a share or a quantity of the same kind") {

@@ -20,7 +20,7 @@ TEST_SUITE("units/read_quantity") {
     CHECK(written.number == 212);
     CHECK(written.unit == "mg/L");
     CHECK(written.basis == "CaCO3");
-    CHECK(written.si_value == rel(0.212, rounding));
+    CHECK(written.value_in_si == rel(0.212, rounding));
     CHECK(written.dimension == DimensionExponents{-3, 1, 0, 0, 0, 0, 0});
     CHECK(written.meaning == Meaning::plain);
     CHECK(read("5 µg / m³").unit == "µg / m³");
@@ -60,7 +60,7 @@ TEST_SUITE("units/read_quantity") {
     const double caco3 = 40.078 + 12.011 + 3 * 15.999;
     CHECK(read_as<EquivalentPerVolume>("1 degfH").value() == rel(10 * 2 / caco3, rounding));
     CHECK(read_as<EquivalentPerVolume>("1 degeH").value() == rel(14.254 * 2 / caco3, rounding));
-    CHECK(read("12 °dH").si_value == read("12 degdH").si_value);
+    CHECK(read("12 °dH").value_in_si == read("12 degdH").value_in_si);
   }
 
   TEST_CASE("temperatures are absolute, whatever their zero") {
@@ -72,9 +72,9 @@ TEST_SUITE("units/read_quantity") {
     CHECK(in_kelvin(read_as<Temperature>("291 K")) == 291);
     CHECK(in_kelvin(read_as<Temperature>("0 K")) == 0);
     CHECK(in_kelvin(read_as<Temperature>("-273.15 degC")) == 0);
-    CHECK(read("18 °C").si_value == read("18 degC").si_value);
-    CHECK(read("18℃").si_value == read("18 degC").si_value);
-    CHECK(read("64 °F").si_value == read("64 degF").si_value);
+    CHECK(read("18 °C").value_in_si == read("18 degC").value_in_si);
+    CHECK(read("18℃").value_in_si == read("18 degC").value_in_si);
+    CHECK(read("64 °F").value_in_si == read("64 degF").value_in_si);
     CHECK(in_celsius(celsius(25)) == within(25, 1e-13));  // K, one rounding at 300
   }
 
@@ -111,13 +111,13 @@ TEST_SUITE("units/read_quantity") {
 
   TEST_CASE("a share of volume has no dimension and is neither a ratio nor a mass fraction") {
     const WrittenQuantity written = read("40 mL/m3");
-    CHECK(written.si_value == rel(40e-6, rounding));
+    CHECK(written.value_in_si == rel(40e-6, rounding));
     CHECK(written.dimension == DimensionExponents{});
     CHECK(written.meaning == Meaning::plain);
   }
 
   TEST_CASE("one unit has many spellings") {
-    const double si_value = read("850 ug/m3").si_value;
+    const double value_in_si = read("850 ug/m3").value_in_si;
     for (const char* text : {"850 \u00B5g/m3",
                              "850 \u03BCg/m3",
                              "850ug/m3",
@@ -129,10 +129,10 @@ TEST_SUITE("units/read_quantity") {
                              "850 ug / m3",
                              "0.850E+3\tug/m3"}) {
       CAPTURE(text);
-      CHECK(read(text).si_value == rel(si_value, rounding));
+      CHECK(read(text).value_in_si == rel(value_in_si, rounding));
       CHECK(read(text).dimension == DimensionExponents{-3, 1, 0, 0, 0, 0, 0});
     }
-    CHECK(read("5 ml/l").si_value == rel(0.005, rounding));
+    CHECK(read("5 ml/l").value_in_si == rel(0.005, rounding));
     CHECK(read("\u22125 mV").number == -5);
   }
 
@@ -147,7 +147,7 @@ TEST_SUITE("units/read_quantity") {
   }
 
   TEST_CASE("negative numbers are left to the reader of the file") {
-    CHECK(read("-3 mg/L").si_value == rel(-0.003, rounding));
+    CHECK(read("-3 mg/L").value_in_si == rel(-0.003, rounding));
   }
 
   TEST_CASE("ppm means what the caller says") {
