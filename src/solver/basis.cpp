@@ -13,41 +13,75 @@ constexpr double dependent = 1e-9;      ///< Pivots are ratios of small whole nu
 constexpr double cancellation = 1e-30;  ///< Rounding of a sum in twice the working precision.
 constexpr double largest_whole = 9e15;  ///< Whole numbers below are exact in a double.
 
+/// Whether the inverse times its denominator, rounded to whole numbers, is proved exact: times M it
+/// must be the denominator times the identity, in whole numbers.
+bool is_whole_over_denominator(const Kernel& kernel, const Basis& basis) {
+  const std::size_t n = basis.columns.size();
+  if (!(basis.denominator >= 1 && basis.denominator < largest_whole)) return false;
+  for (std::size_t r = 0; r < n; ++r) {
+    const int column = basis.columns[r];
+    if (column < 0) continue;
+    for (std::size_t i = 0; i < n; ++i) {
+      double sum = 0;
+      double size = 0;
+      for (int e = kernel.begin[column]; e < kernel.begin[column + 1]; ++e) {
+        const double value = basis.inverse[static_cast<std::size_t>(kernel.row[e]) * n + i];
+        const double term = kernel.nu[e] * std::round(value * basis.denominator);
+        sum += term;
+        size += std::abs(term);
+      }
+      if (!(size < largest_whole) || sum != (i == r ? basis.denominator : 0)) return false;
+    }
+  }
+  return true;
+}
+
 }  // namespace
 
 void resize(Basis& basis, const Kernel& kernel) {
   const auto n = static_cast<std::size_t>(kernel.n_components);
   basis.columns.assign(n, -1);
   basis.inverse.assign(n * n, 0);
-  basis.numerator.assign(n * n, 0);
+  basis.entries.reserve(n * n);
+  basis.begin.assign(n + 1, 0);
+  basis.plain.assign(n, 1);
 }
 
 void clear(Basis& basis) {
   const std::size_t n = basis.columns.size();
   std::fill(basis.columns.begin(), basis.columns.end(), -1);
   std::fill(basis.inverse.begin(), basis.inverse.end(), 0.0);
+  std::fill(basis.plain.begin(), basis.plain.end(), 1);
   for (std::size_t i = 0; i < n; ++i) basis.inverse[i * n + i] = 1;
   basis.denominator = 1;
-  basis.is_exact = true;
+  basis.whole = true;
   basis.rank = 0;
 }
 
 void expand(const Kernel& kernel, const Basis& basis, int column, double* alpha) {
-  const std::size_t n = basis.columns.size();
-  std::fill(alpha, alpha + n, 0.0);
-  const bool by_numerator = basis.denominator != 1;
-  const double* const matrix = by_numerator ? basis.numerator.data() : basis.inverse.data();
+  std::fill(alpha, alpha + basis.columns.size(), 0.0);
   for (int e = kernel.begin[column]; e < kernel.begin[column + 1]; ++e) {
     const double nu = kernel.nu[e];
-    const double* const inverse_column = matrix + static_cast<std::size_t>(kernel.row[e]) * n;
-    for (std::size_t i = 0; i < n; ++i) alpha[i] += nu * inverse_column[i];
+    const Basis::Entry* const last = basis.entries.data() + basis.begin[kernel.row[e] + 1];
+    const Basis::Entry* entry = basis.entries.data() + basis.begin[kernel.row[e]];
+    for (; entry != last; ++entry) alpha[entry->row] += nu * entry->numerator;
   }
-  if (!by_numerator) return;
-  for (std::size_t i = 0; i < n; ++i) alpha[i] /= basis.denominator;
+  if (basis.denominator == 1) return;
+  for (std::size_t i = 0; i < basis.columns.size(); ++i) alpha[i] /= basis.denominator;
 }
 
 bool try_column(const Kernel& kernel, int column, Basis& basis) {
   const std::size_t n = basis.columns.size();
+  const int first = kernel.begin[column];
+  if (kernel.begin[column + 1] == first + 1 && kernel.nu[first] == 1) {
+    const int row = kernel.row[first];
+    if (basis.plain[row] != 0) {  // the common case: a unit column whose row nothing has used
+      if (basis.columns[row] >= 0) return false;
+      basis.columns[row] = column;
+      ++basis.rank;
+      return true;
+    }
+  }
   double small[64];
   std::vector<double> large;
   double* v = small;
@@ -56,27 +90,31 @@ bool try_column(const Kernel& kernel, int column, Basis& basis) {
     v = large.data();
   }
   std::fill(v, v + n, 0.0);
-  for (int e = kernel.begin[column]; e < kernel.begin[column + 1]; ++e) {
+  for (int e = first; e < kernel.begin[column + 1]; ++e) {
+    const double nu = kernel.nu[e];
     const double* const inverse_column =
         &basis.inverse[static_cast<std::size_t>(kernel.row[e]) * n];
-    for (std::size_t i = 0; i < n; ++i) v[i] += kernel.nu[e] * inverse_column[i];
+    for (std::size_t i = 0; i < n; ++i) v[i] += nu * inverse_column[i];
   }
   std::size_t pivot = n;
+  double largest = dependent;
   for (std::size_t i = 0; i < n; ++i) {
-    if (basis.columns[i] < 0 && std::abs(v[i]) > (pivot == n ? dependent : std::abs(v[pivot]))) {
-      pivot = i;
-    }
+    if (basis.columns[i] >= 0 || std::abs(v[i]) <= largest) continue;
+    pivot = i;
+    largest = std::abs(v[i]);
   }
   if (pivot == n) return false;
   const double pivot_value = v[pivot];
   v[pivot] = 0;
   basis.denominator *= pivot_value;
+  basis.whole = basis.whole && kernel.is_whole && std::abs(pivot_value) == 1;
   for (std::size_t k = 0; k < n; ++k) {
     double* const inverse_column = &basis.inverse[k * n];
     const double factor = inverse_column[pivot] / pivot_value;
     if (factor == 0) continue;
     for (std::size_t i = 0; i < n; ++i) inverse_column[i] -= v[i] * factor;
     inverse_column[pivot] = factor;
+    basis.plain[k] = 0;
   }
   basis.columns[pivot] = column;
   ++basis.rank;
@@ -86,47 +124,36 @@ bool try_column(const Kernel& kernel, int column, Basis& basis) {
 void finish(const Kernel& kernel, Basis& basis) {
   const std::size_t n = basis.columns.size();
   basis.denominator = std::abs(std::round(basis.denominator));
-  if (basis.denominator == 1) {
-    for (double& value : basis.inverse) value = std::round(value);
-    basis.numerator = basis.inverse;
-  } else {
-    for (std::size_t k = 0; k < n * n; ++k) {
-      basis.numerator[k] = std::round(basis.inverse[k] * basis.denominator);
+  if (basis.whole || !is_whole_over_denominator(kernel, basis)) basis.denominator = 1;
+  basis.entries.clear();
+  for (std::size_t k = 0; k < n; ++k) {
+    basis.begin[k] = static_cast<int>(basis.entries.size());
+    for (std::size_t i = 0; i < n; ++i) {
+      const double value = basis.inverse[k * n + i];
+      if (value == 0) continue;
+      // It was proved that this product is a whole number but for rounding.
+      const double numerator =
+          basis.denominator == 1 ? value : std::round(value * basis.denominator);
+      if (numerator != 0) basis.entries.push_back({static_cast<int>(i), numerator});
     }
   }
-  // Proof: numerator times M is the denominator times the identity, in whole numbers.
-  basis.is_exact = basis.denominator >= 1 && basis.denominator < largest_whole;
-  for (std::size_t r = 0; r < n && basis.is_exact; ++r) {
-    if (basis.columns[r] < 0) continue;
-    const int column = basis.columns[r];
-    for (std::size_t i = 0; i < n && basis.is_exact; ++i) {
-      double sum = 0;
-      double size = 0;
-      for (int e = kernel.begin[column]; e < kernel.begin[column + 1]; ++e) {
-        const double term =
-            kernel.nu[e] * basis.numerator[static_cast<std::size_t>(kernel.row[e]) * n + i];
-        sum += term;
-        size += std::abs(term);
-      }
-      basis.is_exact = size < largest_whole && sum == (i == r ? basis.denominator : 0);
-    }
-  }
-  if (!basis.is_exact) basis.denominator = 1;
+  basis.begin[n] = static_cast<int>(basis.entries.size());
 }
 
 void transform_totals(const Prepared& prepared, const Basis& basis, std::vector<double>& result) {
   const std::size_t n = basis.columns.size();
-  const bool by_numerator = basis.denominator != 1;
-  const double* const matrix = by_numerator ? basis.numerator.data() : basis.inverse.data();
+  std::fill(result.begin(), result.end(), 0.0);
   for (std::size_t i = 0; i < n; ++i) {
     TwoSum sum;
     double size = 0;
     for (std::size_t k = 0; k < n; ++k) {
-      const double factor = matrix[k * n + i];
+      const double factor = basis.inverse[k * n + i];
       if (factor == 0 || prepared.rows[k] != Prepared::Row::balanced) continue;
-      sum.add_product(factor, prepared.total[k]);
-      size += std::abs(factor * prepared.total[k]);
-      sum.add(factor * prepared.total_low[k]);
+      const double numerator =
+          basis.denominator == 1 ? factor : std::round(factor * basis.denominator);
+      sum.add_product(numerator, prepared.total[k]);
+      sum.add(numerator * prepared.total_low[k]);
+      size += std::abs(numerator * prepared.total[k]);
     }
     // What is left of terms that cancel to the last digit of the sum is 0.
     const bool cancelled = std::abs(sum.value()) <= cancellation * size;

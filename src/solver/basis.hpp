@@ -10,15 +10,24 @@
 
 namespace ionledger::solver {
 
-/// Columns of the kernel, one per row where the rank allows, and the inverse of their matrix as
-/// whole numbers over one denominator, so that coefficients that cancel are exactly 0.
+/// Columns of the kernel, one per row where the rank allows, and the inverse of their matrix.
+/// `finish` writes it as whole numbers over one denominator, sparse, so that coefficients that
+/// cancel are exactly 0.
 struct Basis {
-  std::vector<int> columns;       ///< n_components; -1 for a row outside the rank.
-  std::vector<double> inverse;    ///< n x n, column-major: coefficient (i, k) at [k n + i].
-  std::vector<double> numerator;  ///< inverse = numerator / denominator, when `is_exact`.
+  std::vector<int> columns;     ///< n_components; -1 for a row outside the rank.
+  std::vector<double> inverse;  ///< n x n, column-major: coefficient (i, k) at [k n + i].
   double denominator = 1;
-  bool is_exact = true;
   int rank = 0;
+
+  struct Entry {
+    int row = 0;
+    double numerator = 0;
+  };
+  std::vector<Entry> entries;  ///< Non-zeros of inverse times denominator, column by column.
+  std::vector<int> begin;
+
+  std::vector<unsigned char> plain;  ///< Column k of the inverse is still e_k.
+  bool whole = true;                 ///< Every pivot was 1 or -1: the inverse is exact as it is.
 };
 
 void resize(Basis& basis, const Kernel& kernel);

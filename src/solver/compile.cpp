@@ -54,6 +54,7 @@ void add_column(const double* nu_of_caller, Kernel& kernel) {
     if (nu == 0) continue;
     kernel.row.push_back(i);
     kernel.nu.push_back(nu);
+    kernel.is_whole = kernel.is_whole && nu == std::round(nu);
   }
   kernel.begin.push_back(static_cast<int>(kernel.row.size()));
 }
@@ -113,7 +114,10 @@ void add_powers_and_factors(Kernel& kernel) {
   std::map<std::pair<int, double>, int> known_factors;
   for (int j = 0; j < kernel.n_species; ++j) {
     for (int e = kernel.begin[j]; e < kernel.begin[j + 1]; ++e) {
-      kernel.power.push_back(power_index(kernel.row[e], kernel.nu[e], known_powers, kernel));
+      const double nu = kernel.nu[e];
+      kernel.terms.push_back({std::abs(nu),
+                              2 * kernel.row[e] + (nu < 0),
+                              power_index(kernel.row[e], nu, known_powers, kernel)});
     }
     const Kernel::Factor factor{kernel.activity_class[j], kernel.solvent_exponent[j]};
     const auto [place, is_new] =
@@ -148,7 +152,8 @@ void add_factorisation(const System& system, Kernel& kernel) {
     kernel.below_begin.push_back(static_cast<int>(kernel.below.size()));
     for (const int k : lower[i]) {
       slot[{k, i}] = next;
-      kernel.below.push_back({k, next++});
+      kernel.below.push_back(k);
+      ++next;
     }
   }
   kernel.below_begin.push_back(static_cast<int>(kernel.below.size()));

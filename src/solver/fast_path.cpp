@@ -44,17 +44,19 @@ void sweep(
   }
 }
 
-/// Right-hand side. A row without a phase uses -W ln(plus / minus), which is the logarithmic
+/// Right-hand sides. A row without a phase uses -W ln(plus / minus), which is the logarithmic
 /// residual far away and the linear one close by; a row with one uses T - sum nu c - sum nu n, so
 /// that the unknown is the change of n: large amounts would drown the small ones otherwise.
-void fill_right_hand_side(const Kernel& kernel,
-                          const Prepared& prepared,
-                          const Point& point,
-                          FastWork& work) {
+void fill_right_hand_sides(const Kernel& kernel,
+                           const Prepared& prepared,
+                           const Point& point,
+                           FastWork& work) {
   for (int i = 0; i < kernel.n_components; ++i) {
     work.step[i] = 0;
+    work.by_ionic[i] = work.sums.borders[i].by_ionic;
+    work.by_solvent[i] = work.sums.borders[i].by_solvent;
     if (prepared.rows[i] != Prepared::Row::balanced) {
-      work.sums.border_ionic[i] = work.sums.border_solvent[i] = 0;
+      work.by_ionic[i] = work.by_solvent[i] = 0;
       continue;
     }
     if (work.phases.touched[i] != 0) {
@@ -77,10 +79,18 @@ void fill_right_hand_side(const Kernel& kernel,
   }
 }
 
-double dot(const std::vector<double>& a, const std::vector<double>& b) {
-  double sum = 0;
-  for (std::size_t i = 0; i < a.size(); ++i) sum += a[i] * b[i];
-  return sum;
+/// Changes of I(c) and of the sum of solutes along a change of x.
+struct Along {
+  double ionic = 0, solute = 0;
+};
+
+Along along(const Sums& sums, const std::vector<double>& step) {
+  Along result;
+  for (std::size_t i = 0; i < step.size(); ++i) {
+    result.ionic += sums.borders[i].gradient_ionic * step[i];
+    result.solute += sums.borders[i].gradient_solvent * step[i];
+  }
+  return result;
 }
 
 bool balances_hold(const Kernel& kernel,
@@ -136,9 +146,10 @@ struct Couplings {
 Couplings couple(const Kernel& kernel, const Point& point, FastWork& work) {
   const Sums& sums = work.sums;
   const double slope = kernel.solvent_slope;
-  const double ionic_by_ionic = sums.ionic_by_ionic - dot(sums.gradient_ionic, work.by_ionic);
-  const double ionic_right =
-      point.ionic_strength - sums.ionic - dot(sums.gradient_ionic, work.step);
+  const Along step = along(sums, work.step);
+  const Along by_ionic = along(sums, work.by_ionic);
+  const double ionic_by_ionic = sums.ionic_by_ionic - by_ionic.ionic;
+  const double ionic_right = point.ionic_strength - sums.ionic - step.ionic;
   work.ionic_strength_slope = ionic_by_ionic;
   const double a = std::min(ionic_by_ionic, largest_slope) - 1;
   const double smallest = -0.7 * point.ionic_strength;
@@ -148,14 +159,12 @@ Couplings couple(const Kernel& kernel, const Point& point, FastWork& work) {
     result.ionic = std::clamp(ionic_right / a, smallest, largest);
     return result;
   }
-  const double ionic_by_solvent = sums.ionic_by_solvent - dot(sums.gradient_ionic, work.by_solvent);
+  const Along by_solvent = along(sums, work.by_solvent);
+  const double ionic_by_solvent = sums.ionic_by_solvent - by_solvent.ionic;
   const double a_w = std::exp(point.ln_solvent);
-  const double solvent_by_ionic =
-      slope * (sums.solute_by_ionic - dot(sums.gradient_solvent, work.by_ionic));
-  const double solvent_by_solvent =
-      a_w + slope * (sums.solute_by_solvent - dot(sums.gradient_solvent, work.by_solvent));
-  const double solvent_right =
-      1 - a_w - slope * (sums.solute + dot(sums.gradient_solvent, work.step));
+  const double solvent_by_ionic = slope * (sums.solute_by_ionic - by_ionic.solute);
+  const double solvent_by_solvent = a_w + slope * (sums.solute_by_solvent - by_solvent.solute);
+  const double solvent_right = 1 - a_w - slope * (sums.solute + step.solute);
   const double determinant = a * solvent_by_solvent - ionic_by_solvent * solvent_by_ionic;
   const double ionic =
       (ionic_right * solvent_by_solvent - ionic_by_solvent * solvent_right) / determinant;
@@ -190,12 +199,10 @@ bool take_step(const Kernel& kernel,
       work.phase_by_solvent[a] = kernel.phase_solvent_exponent[m];
     }
   }
-  fill_right_hand_side(kernel, prepared, point, work);
+  fill_right_hand_sides(kernel, prepared, point, work);
   solve_bordered(kernel, sums, work.phases, work.step.data(), work.phase_step.data());
-  work.by_ionic = sums.border_ionic;
   solve_bordered(kernel, sums, work.phases, work.by_ionic.data(), work.phase_by_ionic.data());
   if (kernel.solvent_slope != 0) {
-    work.by_solvent = sums.border_solvent;
     solve_bordered(kernel, sums, work.phases, work.by_solvent.data(), work.phase_by_solvent.data());
   }
   const Couplings couplings = couple(kernel, point, work);
@@ -252,7 +259,8 @@ bool run_fast_path(const Kernel& kernel,
     sums.k_present[j] = prepared.present[j] != 0 ? kernel.k[j] : 0;
   }
   for (int i = 0; i < kernel.n_components; ++i) sums.activity[i] = std::exp(point.x[i]);
-  std::fill(point.amount.begin(), point.amount.end(), 0.0);
+  const bool phases_known =
+      std::any_of(point.amount.begin(), point.amount.end(), [](double n) { return n != 0; });
   evaluate_factors(kernel, point, sums);
   for (int s = 0; s < settings.sweeps; ++s) {
     sweep(kernel, prepared, settings.sweep_damping, point, sums);
@@ -266,7 +274,7 @@ bool run_fast_path(const Kernel& kernel,
       return true;
     }
     ++work.iterations;
-    const bool imposed_only = it < iterations_before_phases;
+    const bool imposed_only = !phases_known && it < iterations_before_phases;
     if (!take_step(kernel, prepared, settings, imposed_only, point, work)) return false;
   }
   return false;

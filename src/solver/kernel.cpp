@@ -24,10 +24,7 @@ void resize(Sums& sums, const Kernel& kernel) {
   sums.factor_value.assign(kernel.factors.size(), 1);
   sums.amount.assign(kernel.k.size(), 0);
   for (auto* v : {&sums.sum, &sums.squares}) v->assign(2 * n, 0);
-  for (auto* v :
-       {&sums.gradient_ionic, &sums.border_ionic, &sums.gradient_solvent, &sums.border_solvent}) {
-    v->assign(n, 0);
-  }
+  sums.borders.assign(n, {});
   sums.hessian.assign(static_cast<std::size_t>(kernel.n_hessian), 0);
 }
 
@@ -59,51 +56,51 @@ void evaluate_amounts(const Kernel& kernel, Sums& sums) {
   }
   std::fill(sums.sum.begin(), sums.sum.end(), 0.0);
   std::fill(sums.squares.begin(), sums.squares.end(), 0.0);
+  double* const sum = sums.sum.data();
+  double* const squares = sums.squares.data();
+  const Kernel::Term* term = kernel.terms.data();
+  const int* const begin = kernel.begin.data();
   for (int j = 0; j < kernel.n_species; ++j) {
     // c_j = K_j a_w^w_j / gamma_j prod_i X_i^nu_ji
     double c = sums.k_present[j] * sums.factor_value[kernel.factor[j]];
-    const int end = kernel.begin[j + 1];
-    for (int e = kernel.begin[j]; e < end; ++e) c *= value[kernel.power[e]];
+    const Kernel::Term* const end = kernel.terms.data() + begin[j + 1];
+    for (const Kernel::Term* t = term; t != end; ++t) c *= value[t->power];
     sums.amount[j] = c;
-    for (int e = kernel.begin[j]; e < end; ++e) {
-      const double nu = kernel.nu[e];
-      const int side = 2 * kernel.row[e] + (nu < 0);
-      const double term = std::abs(nu) * c;
-      sums.sum[side] += term;
-      sums.squares[side] += std::abs(nu) * term;
+    for (; term != end; ++term) {
+      const double part = term->size * c;
+      sum[term->side] += part;
+      squares[term->side] += term->size * part;
     }
   }
 }
 
 void evaluate_borders(const Kernel& kernel, Sums& sums) {
-  const bool with_solvent = kernel.solvent_slope != 0;
-  for (auto* v : {&sums.gradient_ionic, &sums.border_ionic}) std::fill(v->begin(), v->end(), 0.0);
-  for (auto* v : {&sums.gradient_solvent, &sums.border_solvent}) {
-    std::fill(v->begin(), v->end(), 0.0);
-  }
+  std::fill(sums.borders.begin(), sums.borders.end(), Sums::Border{});
   sums.ionic = sums.ionic_by_ionic = sums.ionic_by_solvent = 0;
   sums.solute = sums.solute_by_ionic = sums.solute_by_solvent = 0;
+  Sums::Border* const borders = sums.borders.data();
+  const double* const nu = kernel.nu.data();
+  const int* const row = kernel.row.data();
+  const int* const begin = kernel.begin.data();
   for (int j = 0; j < kernel.n_species; ++j) {
     // d c_j = c_j (nu_j dx - g'_j dI + w_j d ln a_w)
     const double c = sums.amount[j];
-    const double by_ionic = -c * sums.class_slope[kernel.activity_class[j]];
-    const double by_solvent = c * kernel.solvent_exponent[j];
-    const double ionic = kernel.ionic_weight[j];
-    sums.ionic += ionic * c;
-    sums.ionic_by_ionic += ionic * by_ionic;
-    for (int e = kernel.begin[j]; e < kernel.begin[j + 1]; ++e) {
-      sums.gradient_ionic[kernel.row[e]] += kernel.nu[e] * (ionic * c);
-      sums.border_ionic[kernel.row[e]] += kernel.nu[e] * by_ionic;
-    }
-    if (!with_solvent) continue;
-    const double solute = kernel.solute_weight[j];
-    sums.ionic_by_solvent += ionic * by_solvent;
-    sums.solute += solute * c;
-    sums.solute_by_ionic += solute * by_ionic;
-    sums.solute_by_solvent += solute * by_solvent;
-    for (int e = kernel.begin[j]; e < kernel.begin[j + 1]; ++e) {
-      sums.gradient_solvent[kernel.row[e]] += kernel.nu[e] * (solute * c);
-      sums.border_solvent[kernel.row[e]] += kernel.nu[e] * by_solvent;
+    const Sums::Border part{kernel.ionic_weight[j] * c,
+                            -c * sums.class_slope[kernel.activity_class[j]],
+                            kernel.solute_weight[j] * c,
+                            kernel.solvent_exponent[j] * c};
+    sums.ionic += part.gradient_ionic;
+    sums.ionic_by_ionic += kernel.ionic_weight[j] * part.by_ionic;
+    sums.ionic_by_solvent += kernel.ionic_weight[j] * part.by_solvent;
+    sums.solute += part.gradient_solvent;
+    sums.solute_by_ionic += kernel.solute_weight[j] * part.by_ionic;
+    sums.solute_by_solvent += kernel.solute_weight[j] * part.by_solvent;
+    for (int e = begin[j]; e < begin[j + 1]; ++e) {
+      Sums::Border& border = borders[row[e]];
+      border.gradient_ionic += nu[e] * part.gradient_ionic;
+      border.by_ionic += nu[e] * part.by_ionic;
+      border.gradient_solvent += nu[e] * part.gradient_solvent;
+      border.by_solvent += nu[e] * part.by_solvent;
     }
   }
 }
@@ -113,11 +110,11 @@ bool factor_hessian(const Kernel& kernel, const Prepared& prepared, Sums& sums) 
   const int n = kernel.n_components;
   std::fill(sums.hessian.begin(), sums.hessian.end(), 0.0);
   for (int i = 0; i < n; ++i) h[i] = sums.squares[2 * i] + sums.squares[2 * i + 1];
+  const Kernel::Product* product = kernel.products.data();
   for (int j = 0; j < kernel.n_species; ++j) {
     const double c = sums.amount[j];
-    for (int p = kernel.product_begin[j]; p < kernel.product_begin[j + 1]; ++p) {
-      h[kernel.products[p].target] += kernel.products[p].weight * c;
-    }
+    const Kernel::Product* const end = kernel.products.data() + kernel.product_begin[j + 1];
+    for (; product != end; ++product) h[product->target] += product->weight * c;
   }
   for (int i = 0; i < n; ++i) {
     if (prepared.rows[i] == Prepared::Row::balanced) continue;
@@ -129,32 +126,30 @@ bool factor_hessian(const Kernel& kernel, const Prepared& prepared, Sums& sums) 
   for (int i = 0; i < n; ++i) {
     if (!(h[i] > 0)) return false;
     const double inverse = 1 / h[i];
-    for (int u = kernel.update_begin[i]; u < kernel.update_begin[i + 1]; ++u) {
-      const Kernel::Update& update = kernel.updates[u];
-      h[update.target] -= h[update.left] * h[update.right] * inverse;
+    const Kernel::Update* const last = kernel.updates.data() + kernel.update_begin[i + 1];
+    for (const Kernel::Update* u = kernel.updates.data() + kernel.update_begin[i]; u != last; ++u) {
+      h[u->target] -= h[u->left] * h[u->right] * inverse;
     }
-    for (int b = kernel.below_begin[i]; b < kernel.below_begin[i + 1]; ++b) {
-      h[kernel.below[b].slot] *= inverse;
-    }
+    for (int b = kernel.below_begin[i]; b < kernel.below_begin[i + 1]; ++b) h[n + b] *= inverse;
     h[i] = inverse;
   }
   return true;
 }
 
 void solve_hessian(const Kernel& kernel, const Sums& sums, double* b) {
+  // The slots below the diagonal follow each other column by column.
   const double* const h = sums.hessian.data();
   const int n = kernel.n_components;
+  const double* const lower = h + n;
+  const int* const row = kernel.below.data();
+  const int* const begin = kernel.below_begin.data();
   for (int i = 0; i < n; ++i) {
     const double value = b[i];
-    for (int e = kernel.below_begin[i]; e < kernel.below_begin[i + 1]; ++e) {
-      b[kernel.below[e].row] -= h[kernel.below[e].slot] * value;
-    }
+    for (int e = begin[i]; e < begin[i + 1]; ++e) b[row[e]] -= lower[e] * value;
   }
   for (int i = n - 1; i >= 0; --i) {
     double value = b[i] * h[i];
-    for (int e = kernel.below_begin[i]; e < kernel.below_begin[i + 1]; ++e) {
-      value -= h[kernel.below[e].slot] * b[kernel.below[e].row];
-    }
+    for (int e = begin[i]; e < begin[i + 1]; ++e) value -= lower[e] * b[row[e]];
     b[i] = value;
   }
 }

@@ -18,6 +18,7 @@ struct Kernel {
   std::vector<int> begin;  ///< Column j owns the entries begin[j] .. begin[j + 1].
   std::vector<int> row;
   std::vector<double> nu;
+  bool is_whole = true;           ///< Every nu is a whole number.
   std::vector<int> unit_species;  ///< Species nu = e_i without solvent, or -1.
   std::vector<int> unit_inverse;  ///< Species nu = -e_i, or -1.
 
@@ -36,7 +37,13 @@ struct Kernel {
     int previous = -1, step = -1;  ///< value = value[previous] value[step]; -1: from the activity.
   };
   std::vector<Power> powers;
-  std::vector<int> power;  ///< For every entry of a species column.
+  /// What the sums need of every entry of a species column.
+  struct Term {
+    double size = 0;  ///< |nu|
+    int side = 0;     ///< 2 row, or 2 row + 1 when nu < 0
+    int power = 0;    ///< Index of X^nu.
+  };
+  std::vector<Term> terms;
 
   /// exp(w ln a_w) / gamma for every pair of activity class and solvent exponent in use.
   struct Factor {
@@ -54,10 +61,7 @@ struct Kernel {
   };
   std::vector<Product> products;  ///< Off-diagonal contributions, species by species.
   std::vector<int> product_begin;
-  struct Below {
-    int row = 0, slot = 0;
-  };
-  std::vector<Below> below;  ///< Entries under the diagonal, column by column.
+  std::vector<int> below;  ///< Rows of the entries under the diagonal, in the order of the slots.
   std::vector<int> below_begin;
   struct Update {
     int target = 0, left = 0, right = 0;
@@ -106,10 +110,13 @@ struct Sums {
   std::vector<double> amount;   ///< c_j
   std::vector<double> sum;      ///< 2i: sum of nu c over nu > 0; 2i + 1: of -nu c over nu < 0.
   std::vector<double> squares;  ///< The same of nu^2 c.
-  std::vector<double> gradient_ionic;    ///< u_i = sum omega c nu = d I(c) / d x_i
-  std::vector<double> border_ionic;      ///< p_i = d (sum nu c) / d I
-  std::vector<double> gradient_solvent;  ///< v_i = sum s c nu
-  std::vector<double> border_solvent;    ///< q_i = d (sum nu c) / d ln a_w
+  struct Border {
+    double gradient_ionic = 0;    ///< u_i = sum omega c nu = d I(c) / d x_i
+    double by_ionic = 0;          ///< p_i = d (sum nu c) / d I
+    double gradient_solvent = 0;  ///< v_i = sum s c nu
+    double by_solvent = 0;        ///< q_i = d (sum nu c) / d ln a_w
+  };
+  std::vector<Border> borders;  ///< n_components
   double ionic = 0, ionic_by_ionic = 0, ionic_by_solvent = 0;
   double solute = 0, solute_by_ionic = 0, solute_by_solvent = 0;
   std::vector<double> hessian;

@@ -97,6 +97,7 @@ struct Outcome {
 struct Start {
   std::vector<double> x;
   double ionic_strength = -1;
+  std::vector<double> phase_amount;
 };
 
 /// Solves one case from any start. Never throws, never prints. Deterministic.
