@@ -27,6 +27,14 @@ namespace ionledger {
 /// The lines of `text` without their endings; never empty.
 [[nodiscard]] std::vector<std::string_view> lines_of(std::string_view text);
 
+/// Line and column from 1, columns in code points.
+struct TextPlace {
+  int line = 1;
+  int column = 1;
+};
+/// The place of the byte at `offset`; what stands before it is valid UTF-8.
+[[nodiscard]] TextPlace place_of(std::string_view text, std::size_t offset);
+
 /// Byte offset in `line_text` of the code point in column `column` (from 1); the length when there
 /// is none.
 [[nodiscard]] std::size_t byte_of_column(std::string_view line_text, int column);

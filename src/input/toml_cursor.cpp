@@ -1,5 +1,10 @@
 // The only file that includes the TOML library: parses a document into TomlNode and reads that
 // strictly.
+// Some assertions of the library do not hold for malformed text, where its next lines would report
+// an error properly; with NDEBUG it would even let the compiler assume them. Switched off both
+// ways.
+#undef NDEBUG
+#define TOML_ASSERT(expression) static_assert(true)
 #define TOML_IMPLEMENTATION
 #define TOML_EXCEPTIONS 0
 #define TOML_MAX_NESTED_VALUES 32
@@ -12,6 +17,7 @@
 #include <cmath>
 
 #include "input/file_text.hpp"
+#include "input/toml_scan.hpp"
 #include "input/toml_slip.hpp"
 
 namespace ionledger {
@@ -39,7 +45,7 @@ class Converter {
  public:
   explicit Converter(std::string_view text) : lines_(lines_of(text)) {}
 
-  TomlNode convert(const toml::node& source) const {
+  [[nodiscard]] TomlNode convert(const toml::node& source) const {
     TomlNode node;
     node.line = static_cast<int>(source.source().begin.line);
     node.column = static_cast<int>(source.source().begin.column);
@@ -157,6 +163,17 @@ void TomlFindings::error(std::string summary, std::string expected, std::string 
 }
 
 std::optional<TomlNode> parse_toml(std::string_view text, TomlFindings& findings) {
+  if (const auto trouble = scan_toml(text)) {
+    const TextPlace place = place_of(text, trouble->offset);
+    const std::string_view line = lines_of(text)[static_cast<std::size_t>(place.line) - 1];
+    findings.error(place.line,
+                   place.column,
+                   trouble->summary,
+                   excerpt(trimmed(line)),
+                   trouble->expected,
+                   trouble->fix);
+    return std::nullopt;
+  }
   const toml::parse_result result = toml::parse(text);
   if (!result) {
     refuse(result.error(), text, findings);

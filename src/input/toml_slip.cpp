@@ -68,9 +68,6 @@ std::string fix_of(std::string_view core, std::string_view line, bool is_at_line
   }
   if (contains(core, "closing '}'") && is_at_line_end)
     return "close the brace on the line it was opened";
-  for (const std::string_view mark : {"\u201C", "\u201D", "\u201E", "\u2018", "\u2019"}) {
-    if (contains(line, mark)) return "use straight quotation marks: \"";
-  }
   if (line.substr(0, 1) == "[") return "";
   const std::size_t equals = line.find('=');
   if (equals == std::string_view::npos) return "write it as: key = \"value\"";

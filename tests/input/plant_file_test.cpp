@@ -217,8 +217,8 @@ TEST_SUITE("input/plant_file") {
       for (int i = 0; i < 1000000; ++i) levels += ".a";
       return levels;
     }();
-    CHECK(refusal(dots + " = 1").find("too many dots") != std::string::npos);
-    CHECK(refusal(dots + " = !").find("too many dots") != std::string::npos);
+    CHECK(refusal(dots + " = 1").find("too many levels") != std::string::npos);
+    CHECK(refusal(dots + " = !").find("too many levels") != std::string::npos);
     CHECK(refusal("a = " + std::string(1000000, '[')).find("nested too deeply") !=
           std::string::npos);
   }
