@@ -170,6 +170,38 @@ struct AmbiguousWord {
   std::string question;  ///< "ferrous_iron (dissolved, Fe(II)) or ferric_iron (Fe(III))?"
 };
 
+/// What one ion carries at infinite dilution.
+struct IonConductivity {
+  double limiting_s_cm2_per_eq = 0;  ///< At 25 degC, per mole of charge.
+  /// n of lambda(T) = lambda(25 degC) (viscosity of water at 25 degC / at T)^n.
+  double viscosity_exponent = 0;
+  std::string source;           ///< Key into Chemistry::sources, of the limiting value.
+  std::string exponent_source;  ///< Of the exponent; empty where it is the convention.
+  Standing standing = Standing::from_memory;
+  std::string note;
+};
+
+/// Numbers from which the conductivity of a solution follows.
+struct ConductivityModel {
+  std::string title;   ///< One line for the report.
+  std::string source;  ///< Key into Chemistry::sources, of the method.
+  std::string note;
+  /// Effective ion sizes for charge 1, 2, ...; the last holds for every higher charge.
+  std::vector<double> sizes_angstrom;
+  /// Limiting values of ions without an entry, for charge 1, 2, ...; the last for every higher one.
+  std::vector<double> unlisted_s_cm2_per_eq;
+  double unlisted_viscosity_exponent = 0;
+  std::map<std::string, IonConductivity> ions;  ///< By species name.
+};
+
+/// Which species and mineral the published indices of the trade speak of. An empty name: these
+/// models have none, and an index that needs it has no value.
+struct IndexRoles {
+  std::string calcium, magnesium, sodium, chloride, sulfate, carbonate;  ///< Basis species.
+  std::string bicarbonate;                                               ///< A species.
+  std::string calcium_carbonate;                                         ///< A mineral.
+};
+
 /// Everything the program knows about chemistry. Immutable after reading.
 struct Chemistry {
   std::string name;    ///< Name of the coherent set.
@@ -183,6 +215,10 @@ struct Chemistry {
   /// Proton condition of alkalinity: eq = -T(H+) + sum reference_protons[i] T(i); n_basis numbers.
   std::vector<double> reference_protons;
   std::map<std::string, std::string> sources;  ///< Key -> full citation.
+  ConductivityModel conductivity;
+  IndexRoles roles;
+  /// Basis species -> formula it counts as among dissolved solids: "H4SiO4" -> "SiO2".
+  std::map<std::string, std::string> solid_formulas;
 
   [[nodiscard]] int species_index(std::string_view name) const;  ///< -1 when there is none.
   [[nodiscard]] int mineral_index(std::string_view name) const;
