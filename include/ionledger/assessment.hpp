@@ -8,6 +8,7 @@
 #include <vector>
 
 #include "ionledger/equilibrium.hpp"
+#include "ionledger/indices.hpp"
 
 namespace ionledger {
 
@@ -64,7 +65,11 @@ struct AssessedState {
   double water_activity = 1;
   double density_kg_per_l = 1;
   double alkalinity_eq_per_kg = 0;
-  std::optional<double> measured_conductivity_us_cm;
+  std::optional<double> measured_conductivity_us_cm;  ///< At 25 degC, as laboratories report it.
+  /// Computed from the ions: of the sealed sample brought to 25 degC, and as the water is.
+  std::optional<double> conductivity_us_cm, conductivity_at_temperature_us_cm;
+  double solids_mg_per_l = 0;       ///< Everything dissolved but gases, bicarbonate in full.
+  double residue_180_mg_per_l = 0;  ///< The same after drying at 180 degC.
 
   double cations_eq_per_kg = 0;
   double anions_eq_per_kg = 0;     ///< Positive.
@@ -84,6 +89,7 @@ struct AssessedState {
   std::vector<SpeciesLine> species;   ///< By falling molality.
   std::vector<MineralLine> minerals;  ///< By falling saturation index, common scales first.
   std::vector<GasLine> gases;         ///< By falling pressure.
+  std::vector<IndexLine> indices;     ///< In a fixed order; those without inputs have no value.
   std::vector<Caution> cautions;      ///< What matters most first.
   Certificate certificate;
 };
@@ -109,6 +115,10 @@ struct Assessment {
 /// Ion-balance acceptance (Standard Methods 1030 E): largest accepted |imbalance| in percent of
 /// cations + anions, from the sum of anions. Below 3 meq/L the criterion is 0.2 meq/L.
 [[nodiscard]] double accepted_imbalance_percent(double cations_eq_per_l, double anions_eq_per_l);
+
+/// Measured over computed conductivity that is accepted (Standard Methods 1030 E).
+inline constexpr double least_conductivity_ratio = 0.9;
+inline constexpr double largest_conductivity_ratio = 1.1;
 
 /// Ion balance of a report without solving anything: acid-base constituents count at their form
 /// near neutral pH (alkalinity as HCO3-, ammonia as NH4+). For `check`.

@@ -8,6 +8,8 @@
 #include "assessment/ion_balance.hpp"
 #include "equilibrium/system.hpp"
 #include "ionledger/assessment.hpp"
+#include "ionledger/conductivity.hpp"
+#include "ionledger/dissolved_solids.hpp"
 #include "stream/volume.hpp"
 
 namespace ionledger {
@@ -15,6 +17,7 @@ namespace {
 
 constexpr double pascal_per_bar = 1e5;
 constexpr double us_per_cm_per_s_per_m = 1e4;
+constexpr double laboratory_degc = 25;
 
 const char* words_of(ClosedStream::PHFrom from) {
   switch (from) {
@@ -66,6 +69,8 @@ class StateBuilder {
     species();
     minerals();
     gases();
+    conductivities();
+    solids_and_indices();
     state_.certificate = solution_.certificate;
     state_.cautions = cautions_of(state_, stream_, closed_, chemistry_, model_);
     return std::move(state_);
@@ -219,6 +224,39 @@ class StateBuilder {
     std::stable_sort(state_.gases.begin(), state_.gases.end(), [](const auto& a, const auto& b) {
       return a.partial_pressure_bar > b.partial_pressure_bar;
     });
+  }
+
+  void conductivities() {
+    if (chemistry_.conductivity.ions.empty()) return;
+    state_.conductivity_at_temperature_us_cm = us_per_cm(solution_);
+    if (state_.temperature_degc == laboratory_degc) {
+      state_.conductivity_us_cm = state_.conductivity_at_temperature_us_cm;
+      return;
+    }
+    Problem at_25;
+    at_25.temperature = celsius(laboratory_degc);
+    at_25.totals = solution_.totals;
+    const Solution solution = solve(at_25, chemistry_, model_);
+    if (solution.status == SolveStatus::converged) {
+      state_.conductivity_us_cm = us_per_cm(solution);
+    }
+  }
+
+  [[nodiscard]] std::optional<double> us_per_cm(const Solution& solution) const {
+    const double value = conductivity(chemistry_, solution).value();
+    return std::isfinite(value) ? std::optional(us_per_cm_per_s_per_m * value) : std::nullopt;
+  }
+
+  void solids_and_indices() {
+    const double litres = stream_.litre_per_kg_water;
+    state_.solids_mg_per_l = dissolved_solids_mg_per_l(chemistry_, solution_, litres);
+    state_.residue_180_mg_per_l = residue_180_mg_per_l(chemistry_, solution_, litres);
+    std::vector<bool> known = stream_.reported;
+    for (std::size_t i = 0; i < known.size(); ++i) {
+      known[i] = known[i] || solution_.totals[i] > 0;
+    }
+    state_.indices =
+        indices_of({solution_, litres, state_.solids_mg_per_l, known}, chemistry_, model_);
   }
 
   const Stream& stream_;

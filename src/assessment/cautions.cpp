@@ -79,6 +79,24 @@ class CautionList {
   std::vector<Caution> cautions_;
 };
 
+/// An analysis whose ions do not carry the current that was measured.
+Caution conductivity_caution(const AssessedState& state) {
+  if (!state.measured_conductivity_us_cm || !state.conductivity_us_cm) return {};
+  const double ratio = *state.measured_conductivity_us_cm / *state.conductivity_us_cm;
+  if (ratio >= least_conductivity_ratio && ratio <= largest_conductivity_ratio) return {};
+  return {"conductivity",
+          fmt::format(
+              "Measured are {:.4g} uS/cm; the ions of this analysis make {:.4g} at 25 degC. The "
+              "ratio {:.2f} is outside {:.1f} to {:.1f} (Standard Methods 1030 E): {}, or the "
+              "meter was not read at 25 degC.",
+              *state.measured_conductivity_us_cm,
+              *state.conductivity_us_cm,
+              ratio,
+              least_conductivity_ratio,
+              largest_conductivity_ratio,
+              ratio > 1 ? "ions are missing or too low" : "ions are too high")};
+}
+
 void add_hazards(const AssessedState& state, const Chemistry& chemistry, CautionList& list) {
   if (state.ph < corrosive_below_ph || state.ph > corrosive_above_ph) {
     list.add("handling",
@@ -123,6 +141,7 @@ std::vector<Caution> cautions_of(const AssessedState& state,
                  model.name));
   }
   add_hazards(state, chemistry, list);
+  list.add(conductivity_caution(state));
   list.add(missing_majors_caution(stream, chemistry));
   for (const Caution& caution : closed.cautions) list.add(caution);
   for (const Caution& caution : stream.cautions) list.add(caution);
