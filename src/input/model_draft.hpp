@@ -18,6 +18,8 @@ struct ModelDraft {
   std::vector<TomlCursor> cited_sources;    ///< Values that must be keys of sources.
   std::vector<TomlCursor> named_species;    ///< Entries whose key must be a species.
   std::vector<TomlCursor> named_models;     ///< Values that must be names of activity models.
+  std::vector<TomlCursor> species_values;   ///< Values that must be names of species.
+  std::vector<TomlCursor> mineral_values;   ///< Values that must be names of minerals.
 
   /// Records that `table` defines `name`; an error, and false, when another one does.
   bool define(const std::string& kind, const std::string& name, const TomlCursor& table);
@@ -33,5 +35,11 @@ void read_gas(TomlCursor& table, const std::string& file, ModelDraft& draft);
 void read_constituent(TomlCursor& table, ModelDraft& draft);
 void read_ambiguous_word(TomlCursor& table, ModelDraft& draft);
 void read_activity_model(TomlCursor& table, ModelDraft& draft);
+void read_conductivity(TomlCursor& table, ModelDraft& draft);
+void read_index_roles(TomlCursor& table, ModelDraft& draft);
+void read_dissolved_solids(TomlCursor& table, ModelDraft& draft);
+
+/// The value of "standing", or an error that lists the words.
+[[nodiscard]] Standing read_standing(TomlCursor& table);
 
 }  // namespace ionledger

@@ -94,10 +94,21 @@ class ModelReader {
     for (TomlCursor& table : tables(root, "ambiguous")) read_ambiguous_word(table, draft_);
     for (TomlCursor& table : tables(root, "activity_model")) read_activity_model(table, draft_);
     for (TomlCursor& table : tables(root, "source")) read_source(table);
+    read_single(root, "conductivity", read_conductivity);
+    read_single(root, "index_roles", read_index_roles);
+    read_single(root, "dissolved_solids", read_dissolved_solids);
     // Read before, in read_set_and_basis.
     static_cast<void>(root.find("set"));
     static_cast<void>(root.find("basis"));
     root.refuse_unknown_keys();
+  }
+
+  /// A table that all files together hold once.
+  void read_single(TomlCursor& root, const char* key, void (*reader)(TomlCursor&, ModelDraft&)) {
+    auto table = root.find(key);
+    if (table && table->must_be_table() && draft_.define("table", key, *table)) {
+      reader(*table, draft_);
+    }
   }
 
   void read_source(TomlCursor& table) {
@@ -131,6 +142,12 @@ class ModelReader {
     }
     for (const TomlCursor& model : draft_.named_models) {
       refuse_unless_known(model, "activity_model", "the name of some [[activity_model]]");
+    }
+    for (const TomlCursor& value : draft_.species_values) {
+      refuse_unless_known(value, "species", "a species of [[basis]], [[species]] or [[pair]]");
+    }
+    for (const TomlCursor& value : draft_.mineral_values) {
+      refuse_unless_known(value, "mineral", "the name of some [[mineral]]");
     }
     for (const TomlCursor& entry : draft_.named_species) {
       if (draft_.models.chemistry.species_index(entry.key()) >= 0) continue;

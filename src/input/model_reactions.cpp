@@ -131,7 +131,7 @@ EquilibriumConstant read_constant(TomlCursor& table, ModelDraft& draft) {
   }
   constant.uncertainty_is_estimated = table.flag("uncertainty_is_estimated", false);
   constant.source = draft.cite(table);
-  constant.standing = one_of(table, "standing", standing_words).standing;
+  constant.standing = read_standing(table);
   constant.note = table.text_if("note", "why this value");
   constant.alternatives = read_alternatives(table, draft);
   return constant;
@@ -180,6 +180,10 @@ Species named_species(TomlCursor& table, const std::string& file) {
 }
 
 }  // namespace
+
+Standing read_standing(TomlCursor& table) {
+  return one_of(table, "standing", standing_words).standing;
+}
 
 void read_basis(TomlCursor& table, const std::string& file, ModelDraft& draft) {
   Species species = named_species(table, file);
