@@ -68,7 +68,7 @@ struct AssessedState {
   std::optional<double> measured_conductivity_us_cm;  ///< At 25 degC, as laboratories report it.
   /// Computed from the ions: of the sealed sample brought to 25 degC, and as the water is.
   std::optional<double> conductivity_us_cm, conductivity_at_temperature_us_cm;
-  double solids_mg_per_l = 0;       ///< Everything dissolved but gases, bicarbonate in full.
+  double tds_mg_per_l = 0;          ///< Everything dissolved but gases, bicarbonate in full.
   double residue_180_mg_per_l = 0;  ///< The same after drying at 180 degC.
 
   double cations_eq_per_kg = 0;

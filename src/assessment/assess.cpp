@@ -249,14 +249,14 @@ class StateBuilder {
 
   void solids_and_indices() {
     const double litres = stream_.litre_per_kg_water;
-    state_.solids_mg_per_l = dissolved_solids_mg_per_l(chemistry_, solution_, litres);
+    state_.tds_mg_per_l = dissolved_solids_mg_per_l(chemistry_, solution_, litres);
     state_.residue_180_mg_per_l = residue_180_mg_per_l(chemistry_, solution_, litres);
     std::vector<bool> known = stream_.reported;
     for (std::size_t i = 0; i < known.size(); ++i) {
       known[i] = known[i] || solution_.totals[i] > 0;
     }
     state_.indices =
-        indices_of({solution_, litres, state_.solids_mg_per_l, known}, chemistry_, model_);
+        indices_of({solution_, litres, state_.tds_mg_per_l, known}, chemistry_, model_);
   }
 
   const Stream& stream_;

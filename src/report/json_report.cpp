@@ -72,6 +72,28 @@ Json gas_of(const GasLine& line) {
           {"formula", line.formula}};
 }
 
+/// Values by key; null where an input is missing.
+Json index_values_of(const AssessedState& state) {
+  Json object = Json::object();
+  for (const IndexLine& line : state.indices) object[line.key] = optional_number(line.value);
+  return object;
+}
+
+Json index_of(const IndexLine& line) {
+  return {{"index", line.key},
+          {"title", line.title},
+          {"value", optional_number(line.value)},
+          {"unit", line.unit},
+          {"formula", line.formula},
+          {"source", line.source},
+          {"inputs",
+           array_of(line.inputs,
+                    [](const IndexInput& input) -> Json {
+                      return {{"name", input.name}, {"value", input.value}, {"unit", input.unit}};
+                    })},
+          {"missing", line.missing}};
+}
+
 Json caution_of(const Caution& caution) {
   return {{"about", caution.about}, {"says", caution.says}};
 }
@@ -100,16 +122,20 @@ Json state_of(const AssessedState& state) {
   object["ionic_strength_mol_per_kg"] = state.ionic_strength;
   object["water_activity"] = state.water_activity;
   object["density_kg_per_L"] = state.density_kg_per_l;
-  object["conductivity_uS_per_cm"] = nullptr;  // of the water as computed; not yet
+  object["conductivity_uS_per_cm"] = optional_number(state.conductivity_us_cm);
+  object["conductivity_at_temperature_uS_per_cm"] =
+      optional_number(state.conductivity_at_temperature_us_cm);
   object["measured_conductivity_uS_per_cm"] = optional_number(state.measured_conductivity_us_cm);
+  object["tds_mg_per_L"] = state.tds_mg_per_l;
+  object["residue_180_mg_per_L"] = state.residue_180_mg_per_l;
   object["alkalinity_eq_per_kg"] = state.alkalinity_eq_per_kg;
   object["charge"] = charge_of(state);
   object["totals"] = array_of(state.totals, total_of);
   object["species"] = array_of(state.species, species_of);
   object["minerals"] = array_of(state.minerals, mineral_of);
   object["gases"] = array_of(state.gases, gas_of);
-  object["indices"] = {
-      {"langelier", nullptr}, {"ryznar", nullptr}, {"ccpp_mg_per_L_as_CaCO3", nullptr}};
+  object["indices"] = index_values_of(state);
+  object["index_details"] = array_of(state.indices, index_of);
   object["cautions"] = array_of(state.cautions, caution_of);
   object["certificate"] = certificate_of(state.certificate);
   return object;

@@ -106,6 +106,17 @@ std::string alkalinity_text(const AssessedState& state) {
   return text;
 }
 
+std::string conductivity_text(const AssessedState& state) {
+  const auto value = [](const std::optional<double>& us_cm) {
+    return us_cm ? significant_text(*us_cm, 4) + " µS/cm" : std::string("not known");
+  };
+  return value(state.conductivity_us_cm) + " at 25 °C from the ions, " +
+         value(state.conductivity_at_temperature_us_cm) + " as the water is; " +
+         (state.measured_conductivity_us_cm
+              ? plain_text(*state.measured_conductivity_us_cm) + " µS/cm measured"
+              : "not measured");
+}
+
 void print_essentials(TextPage& page, const AssessedState& state) {
   page.heading("Essentials");
   page.labelled("pH", ph_text(state), Ink::strong);
@@ -113,10 +124,10 @@ void print_essentials(TextPage& page, const AssessedState& state) {
   page.labelled("water activity", fixed_text(state.water_activity, 4));
   page.labelled("density", fixed_text(state.density_kg_per_l, 4) + " kg/L");
   page.labelled("alkalinity", alkalinity_text(state));
-  page.labelled("conductivity",
-                state.measured_conductivity_us_cm
-                    ? plain_text(*state.measured_conductivity_us_cm) + " µS/cm at 25 °C, measured"
-                    : "not reported");
+  page.labelled("conductivity", conductivity_text(state));
+  page.labelled("dissolved solids",
+                significant_text(state.tds_mg_per_l, 4) + " mg/L; dried at 180 °C " +
+                    significant_text(state.residue_180_mg_per_l, 4));
 }
 
 void print_totals(TextPage& page, const AssessedState& state) {
@@ -188,6 +199,7 @@ std::string text_report(const Assessment& assessment, const TextStyle& style) {
     print_minerals(page, state);
     print_species(page, state);
     print_gases(page, state);
+    print_indices(page, state);
     print_totals(page, state);
     print_cautions(page, state.cautions, true);
     print_record(page, assessment, state.certificate);

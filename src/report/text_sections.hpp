@@ -29,6 +29,7 @@ void print_ledger(TextPage& page, const AssessedState& state);
 void print_minerals(TextPage& page, const AssessedState& state);
 void print_species(TextPage& page, const AssessedState& state);
 void print_gases(TextPage& page, const AssessedState& state);
+void print_indices(TextPage& page, const AssessedState& state);
 
 /// Cautions of an assessment or of a balance; `has_authority` adds the line about whose word
 /// counts.
