@@ -60,6 +60,24 @@ inline AssessedState example_state() {
                      0},
                     {"magnesite", "MgCO3", -0.4, 0.1, false, "", 0}};
   state.gases = {{"carbon dioxide", "CO2", 5.1e-4}, {"ammonia", "NH3", 3.0e-10}};
+  state.indices = {
+      {"langelier",
+       "Langelier saturation index",
+       0.957,
+       "",
+       "pH - pHs",
+       "Langelier 1936",
+       {{"pH", 8.247, ""}, {"calcium", 3.3e-3, "mol/L"}},
+       ""},
+      {"ryznar", "Ryznar stability index", {}, "", "2 pHs - pH", "Ryznar 1944", {}, "calcium"},
+      {"ccpp_mg_per_L_as_CaCO3",
+       "Calcium carbonate precipitation potential",
+       31.27,
+       "mg/L as CaCO3",
+       "what forms until equilibrium",
+       "Standard Methods 2330 C",
+       {{"temperature", 31, "degC"}},
+       ""}};
   state.cautions = {{"temperature", "First caution, one sentence."},
                     {"phosphate",
                      "Second caution: a longer one, which has to be wrapped because it "

@@ -43,6 +43,10 @@ TEST_SUITE("report/json_report") {
                         "water_activity",
                         "density_kg_per_L",
                         "conductivity_uS_per_cm",
+                        "conductivity_at_temperature_uS_per_cm",
+                        "measured_conductivity_uS_per_cm",
+                        "tds_mg_per_L",
+                        "residue_180_mg_per_L",
                         "charge",
                         "totals",
                         "species",
@@ -99,7 +103,19 @@ TEST_SUITE("report/json_report") {
     CHECK(state["minerals"][0]["saturation_index"].is_null());
     CHECK(state["measured_pH"].is_null());
     CHECK(state["conductivity_uS_per_cm"].is_null());
-    for (const auto& [key, value] : state["indices"].items()) CHECK(value.is_null());
+    CHECK(state["indices"]["ryznar"].is_null());
+    CHECK(state["indices"]["langelier"].get<double>() == 0.957);
+  }
+
+  TEST_CASE("An index comes with its formula, its source and what went into it") {
+    const Json state = Json::parse(json_report(example_assessment()))["states"][0];
+    const Json& langelier = state["index_details"][0];
+    CHECK(has_in_order(langelier,
+                       {"index", "title", "value", "unit", "formula", "source", "inputs"}));
+    CHECK(langelier["inputs"][1]["name"] == "calcium");
+    CHECK(langelier["inputs"][1]["value"].get<double>() == 3.3e-3);
+    CHECK(langelier["inputs"][1]["unit"] == "mol/L");
+    CHECK(state["index_details"][1]["missing"] == "calcium");
   }
 
   TEST_CASE("Empty lists are lists, and odd text is no obstacle") {
