@@ -12,7 +12,7 @@ constexpr int decimals_of_an_index = 2;
 constexpr int digits_of_an_amount = 3;
 
 std::string value_text(const IndexLine& line) {
-  if (!line.value) return "-";
+  if (!line.value) return no_number;
   return line.unit.empty() ? fixed_text(*line.value, decimals_of_an_index)
                            : significant_text(*line.value, digits_of_an_amount) + " " + line.unit;
 }
@@ -50,9 +50,7 @@ void print_indices(TextPage& page, const AssessedState& state) {
     for (const IndexLine& line : state.indices) print_evidence(page, line);
   } else if (without > 0) {
     page.paragraph(
-        counted(without, "index has", "indices have") + " no value: an input is missing.",
-        2,
-        Ink::quiet);
+        "Left out: " + counted(without, "index", "indices") + " without an input.", 2, Ink::quiet);
   }
 }
 

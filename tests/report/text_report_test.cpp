@@ -219,6 +219,19 @@ TEST_SUITE("report/text_report") {
     }
   }
 
+  TEST_CASE("Indices are listed by title, and --all shows formula, inputs and what is missing") {
+    const std::string some = text_report(example_assessment(), style(80, false, false));
+    const std::string all = text_report(example_assessment(), style(80, true, false));
+    CHECK(holds(some, "Langelier saturation index"));
+    CHECK(holds(some, "0.96"));
+    CHECK(holds(some, "31.3 mg/L as CaCO3"));
+    CHECK(holds(some, "Left out: 1 index"));
+    CHECK_FALSE(holds(some, "Ryznar"));
+    CHECK(holds(all, "pH - pHs; Langelier 1936"));
+    CHECK(holds(all, "from pH 8.25, calcium 0.00330 mol/L"));
+    CHECK(holds(all, "missing: calcium"));
+  }
+
   TEST_CASE("Every caution is there, whole, and so is the last word on authority") {
     const Assessment assessment = example_assessment();
     const std::string text = text_report(assessment, style(80, false, false));
