@@ -10,6 +10,7 @@
 #include "ionledger/activity.hpp"
 #include "ionledger/analysis.hpp"
 #include "ionledger/chemistry.hpp"
+#include "ionledger/treatment.hpp"
 
 namespace ionledger {
 
@@ -18,6 +19,7 @@ struct PlantFile {
   Analysis analysis;
   std::string activity_model;  ///< Empty: the default of the chemistry.
   SourceSpan activity_span;
+  Train train;  ///< A Blend still lacks its water: the other file is for the caller to read.
 };
 
 /// Largest file that is read, in bytes; larger ones are refused without parsing.
@@ -39,6 +41,7 @@ struct ModelFile {
 /// What models/ holds.
 struct Models {
   Chemistry chemistry;
+  Supplies supplies;
   std::vector<ActivityModel> activity_models;
   std::string default_activity_model;
   /// By name; nullptr when there is none.

@@ -96,7 +96,7 @@ struct Supplies {
 /// Fills what is derived and checks it: formulas readable, what an ingredient books neutral and of
 /// the atoms of its formula, shares that add up to no more than one, every species, gas, mineral
 /// and family known. Expects a compiled chemistry. Errors at `where["reagent:NAME"]`,
-/// "resin:NAME", "atmosphere:NAME", "solid_density:NAME", "incompatible:SAYS".
+/// "resin:NAME", "atmosphere:NAME", "solid_density:NAME", "incompatible:FIRST/SECOND".
 [[nodiscard]] bool compile_supplies(Supplies& supplies,
                                     const Chemistry& chemistry,
                                     const std::map<std::string, SourceSpan>& where,
@@ -158,7 +158,7 @@ struct Word {
 };
 
 /// `sodium = "97 %"`
-struct NamedQuantity {
+struct NamedGiven {
   Word name;
   Given value;
 };
@@ -191,20 +191,20 @@ struct Concentrate {
   enum class By { cycles, evaporated, recovery };
   By by = By::cycles;
   Given factor;                          ///< 4.2, or a ratio.
-  std::vector<NamedQuantity> rejection;  ///< Recovery only; what is not named is kept whole.
+  std::vector<NamedGiven> rejection;  ///< Recovery only; what is not named is kept whole.
   std::optional<Given> polarisation;     ///< At the membrane over in the bulk, >= 1.
   bool keeps_permeate = false;           ///< The train goes on with the permeate.
 };
 
 /// Takes a share of what is dissolved as the gas itself; what is left finds its equilibrium then.
 struct Strip {
-  std::vector<NamedQuantity> shares;
+  std::vector<NamedGiven> shares;
 };
 
 /// Gases at constant partial pressure; those not named stay in the water.
 struct OpenTo {
   Word atmosphere;                       ///< Empty when pressures are given.
-  std::vector<NamedQuantity> pressures;  ///< Pressure.
+  std::vector<NamedGiven> pressures;  ///< Pressure.
 };
 
 /// A sealed gas space, which first holds `gas` and then every gas the water can give off.

@@ -39,7 +39,16 @@ void read_conductivity(TomlCursor& table, ModelDraft& draft);
 void read_index_roles(TomlCursor& table, ModelDraft& draft);
 void read_dissolved_solids(TomlCursor& table, ModelDraft& draft);
 
-/// The value of "standing", or an error that lists the words.
+void read_reagent(TomlCursor& table, ModelDraft& draft);
+void read_resin(TomlCursor& table, ModelDraft& draft);
+void read_atmosphere(TomlCursor& table, ModelDraft& draft);
+void read_incompatible(TomlCursor& table, ModelDraft& draft);
+void read_solid_density(TomlCursor& table, ModelDraft& draft);
+
+// Values that several kinds of table have.
 [[nodiscard]] Standing read_standing(TomlCursor& table);
+[[nodiscard]] std::vector<std::string> read_texts(TomlCursor& table,
+                                                  const std::string& key,
+                                                  const std::string& expected);
 
 }  // namespace ionledger

@@ -35,7 +35,10 @@ class ModelReader {
     cross_checks();
     if (failed()) return std::nullopt;
     Models& models = draft_.models;
-    if (!compile_chemistry(models.chemistry, draft_.where, diagnostics_)) return std::nullopt;
+    if (!compile_chemistry(models.chemistry, draft_.where, diagnostics_) ||
+        !compile_supplies(models.supplies, models.chemistry, draft_.where, diagnostics_)) {
+      return std::nullopt;
+    }
     models.chemistry.digest = digest(files);
     return std::move(models);
   }
@@ -93,6 +96,11 @@ class ModelReader {
     for (TomlCursor& table : tables(root, "constituent")) read_constituent(table, draft_);
     for (TomlCursor& table : tables(root, "ambiguous")) read_ambiguous_word(table, draft_);
     for (TomlCursor& table : tables(root, "activity_model")) read_activity_model(table, draft_);
+    for (TomlCursor& table : tables(root, "reagent")) read_reagent(table, draft_);
+    for (TomlCursor& table : tables(root, "resin")) read_resin(table, draft_);
+    for (TomlCursor& table : tables(root, "atmosphere")) read_atmosphere(table, draft_);
+    for (TomlCursor& table : tables(root, "incompatible")) read_incompatible(table, draft_);
+    for (TomlCursor& table : tables(root, "solid_density")) read_solid_density(table, draft_);
     for (TomlCursor& table : tables(root, "source")) read_source(table);
     read_single(root, "conductivity", read_conductivity);
     read_single(root, "index_roles", read_index_roles);

@@ -7,18 +7,6 @@
 namespace ionledger {
 namespace {
 
-std::vector<std::string> read_texts(TomlCursor& table,
-                                    const std::string& key,
-                                    const std::string& expected) {
-  std::vector<std::string> texts;
-  const auto array = table.find(key);
-  if (!array) return texts;
-  for (const TomlCursor& item : array->items(expected)) {
-    texts.push_back(item.text(expected).value_or(""));
-  }
-  return texts;
-}
-
 Constituent::Kind read_kind(TomlCursor& table) {
   const char* const expected = "\"alkalinity\" or \"hardness\"; left out for a total";
   const auto value = table.find("kind");
@@ -32,6 +20,18 @@ Constituent::Kind read_kind(TomlCursor& table) {
 }
 
 }  // namespace
+
+std::vector<std::string> read_texts(TomlCursor& table,
+                                    const std::string& key,
+                                    const std::string& expected) {
+  std::vector<std::string> texts;
+  const auto array = table.find(key);
+  if (!array) return texts;
+  for (const TomlCursor& item : array->items(expected)) {
+    texts.push_back(item.text(expected).value_or(""));
+  }
+  return texts;
+}
 
 void read_constituent(TomlCursor& table, ModelDraft& draft) {
   Constituent constituent;

@@ -7,6 +7,7 @@
 
 #include "input/file_text.hpp"
 #include "input/quantity_value.hpp"
+#include "input/steps.hpp"
 #include "input/toml_cursor.hpp"
 #include "ionledger/readers.hpp"
 
@@ -36,7 +37,6 @@ struct UnreadSection {
   const char* summary;
 };
 constexpr UnreadSection unread_sections[] = {
-    {"step", "treatment steps are not read by this version"},
     {"find", "the question [find] is not read by this version"},
     {"screen", "the question [screen] is not read by this version"},
 };
@@ -69,10 +69,11 @@ class PlantReader {
     stream();
     analysis();
     if (auto balance = section("balance")) read_balance(*balance);
+    if (const auto steps = root_.find("step")) plant_.train = read_steps(*steps, ppm_);
     for (const UnreadSection& unread : unread_sections) {
       if (const auto found = root_.find(unread.key)) {
         found->key_error(unread.summary,
-                         "title, ppm_means, [model], [stream], [analysis], [balance]",
+                         "title, ppm_means, [model], [stream], [analysis], [balance], [[step]]",
                          "leave the section out to assess the water as it was analysed");
       }
     }

@@ -6,8 +6,8 @@ namespace {
 
 using Quantities = std::vector<std::pair<std::string, Given*>>;
 
-void add_named(const std::string& key, std::vector<NamedQuantity>& named, Quantities& list) {
-  for (NamedQuantity& entry : named) list.emplace_back(key + "." + entry.name.text, &entry.value);
+void add_named(const std::string& key, std::vector<NamedGiven>& named, Quantities& list) {
+  for (NamedGiven& entry : named) list.emplace_back(key + "." + entry.name.text, &entry.value);
 }
 
 /// One overload for each action.

@@ -217,7 +217,7 @@ class TrainChecker {
             step.factor.text,
             "concentrate = \"75 % recovery\" with them");
     }
-    for (const NamedQuantity& rejection : step.rejection) check_rejection(rejection);
+    for (const NamedGiven& rejection : step.rejection) check_rejection(rejection);
     if (!step.polarisation) return;
     const double polarisation = step.polarisation->quantity.number;
     if (polarisation >= 1 && polarisation <= highest_polarisation) return;
@@ -228,7 +228,7 @@ class TrainChecker {
                       highest_polarisation));
   }
 
-  void check_rejection(const NamedQuantity& rejection) {
+  void check_rejection(const NamedGiven& rejection) {
     const Chemistry& chemistry = plant_.chemistry;
     check_share(rejection.value, true);
     const int c = chemistry.constituent_index(rejection.name.text);
@@ -253,7 +253,7 @@ class TrainChecker {
   }
 
   void check(const Strip& strip) {
-    for (const NamedQuantity& entry : strip.shares) {
+    for (const NamedGiven& entry : strip.shares) {
       check_share(entry.value, true);
       if (!is_gas(entry.name)) continue;
       const auto gas = static_cast<std::size_t>(gas_named(entry.name.text, plant_.chemistry));
@@ -270,7 +270,7 @@ class TrainChecker {
         plant_.supplies.atmosphere(open.atmosphere.text) == nullptr) {
       unknown("atmosphere", open.atmosphere, names_of(plant_.supplies.atmospheres));
     }
-    for (const NamedQuantity& gas : open.pressures) {
+    for (const NamedGiven& gas : open.pressures) {
       static_cast<void>(is_gas(gas.name));
       if (!is_one_of<Pressure>(gas.value, "a partial pressure such as \"0.0004 bar\"")) continue;
       if (gas.value.quantity.si_value > 0) continue;

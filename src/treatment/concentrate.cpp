@@ -29,7 +29,7 @@ void balance_by_hydrogen(Amounts& amounts, double charge_eq, const Chemistry& ch
 /// Share of each component, hydrogen aside, that passes the membrane with the water.
 std::vector<double> passages(const Concentrate& step, const Chemistry& chemistry) {
   std::vector<double> passage(static_cast<std::size_t>(chemistry.n_basis), 0.0);
-  for (const NamedQuantity& rejection : step.rejection) {
+  for (const NamedGiven& rejection : step.rejection) {
     const int c = chemistry.constituent_index(rejection.name.text);
     const Constituent& constituent = chemistry.constituents[static_cast<std::size_t>(c)];
     const int i = chemistry.species_index(constituent.basis_species);

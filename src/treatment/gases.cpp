@@ -25,7 +25,7 @@ std::vector<HeldPressure> pressures_of(const OpenTo& open, const Workbench& benc
   std::vector<HeldPressure> held;
   const Chemistry& chemistry = bench.chemistry();
   if (open.atmosphere.text.empty()) {
-    for (const NamedQuantity& gas : open.pressures) {
+    for (const NamedGiven& gas : open.pressures) {
       held.push_back({static_cast<std::size_t>(gas_named(gas.name.text, chemistry)),
                       gas.value.quantity.si_value / pascal_per_bar});
     }
@@ -87,7 +87,7 @@ int gas_named(const std::string& key, const Chemistry& chemistry) {
 
 Applied apply(const Strip& strip, const Water& water, Workbench& bench, StepRecord& record) {
   Amounts amounts = amounts_of(water);
-  for (const NamedQuantity& entry : strip.shares) {
+  for (const NamedGiven& entry : strip.shares) {
     const Gas& gas =
         bench.chemistry()
             .gases[static_cast<std::size_t>(gas_named(entry.name.text, bench.chemistry()))];

@@ -182,7 +182,7 @@ class SupplyCompiler {
             return reagent.family == family;
           });
       if (is_known) continue;
-      error("incompatible:" + pair.says,
+      error("incompatible:" + pair.first + "/" + pair.second,
             fmt::format("there is no family \"{}\" of reagents", family),
             fmt::format("\"{}\" in [[incompatible]]", family),
             "the family of some [[reagent]]");
