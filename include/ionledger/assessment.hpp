@@ -9,6 +9,7 @@
 
 #include "ionledger/equilibrium.hpp"
 #include "ionledger/indices.hpp"
+#include "ionledger/treatment.hpp"
 
 namespace ionledger {
 
@@ -90,7 +91,14 @@ struct AssessedState {
   std::vector<MineralLine> minerals;  ///< By falling saturation index, common scales first.
   std::vector<GasLine> gases;         ///< By falling pressure.
   std::vector<IndexLine> indices;     ///< In a fixed order; those without inputs have no value.
-  std::vector<Caution> cautions;      ///< What matters most first.
+
+  /// Of a step; empty in a water as received.
+  std::vector<Portion> added, removed, deposited;
+  bool solids_stay = false;             ///< What was deposited is suspended in this water.
+  double water_kg_per_kg_feed = 1;      ///< Water in this state for every kg in the feed.
+  std::optional<double> flow_m3_per_h;  ///< At the temperature of this state.
+
+  std::vector<Caution> cautions;  ///< What matters most first.
   Certificate certificate;
 };
 
@@ -111,6 +119,13 @@ struct Assessment {
                                 const ClosedStream& closed,
                                 const Chemistry& chemistry,
                                 const ActivityModel& model);
+
+/// Adds the states of a train, in order: one for each step under its name, and one for each water
+/// beside it under "STEP_permeate", "STEP_concentrate" or "STEP_membrane".
+void assess_train(const TrainOutcome& train,
+                  const Stream& stream,
+                  const Plant& plant,
+                  Assessment& assessment);
 
 /// Ion-balance acceptance (Standard Methods 1030 E): largest accepted |imbalance| in percent of
 /// cations + anions, from the sum of anions. Below 3 meq/L the criterion is 0.2 meq/L.

@@ -74,7 +74,7 @@ struct ClosedStream {
   SolveStatus status = SolveStatus::not_run;
   std::string reason;
   std::vector<double> totals;  ///< n_basis, mol per kg of water.
-  enum class PHFrom { charge_balance, measured, alkalinity_and_carbon };
+  enum class PHFrom { charge_balance, measured, alkalinity_and_carbon, hydrogen_balance };
   PHFrom ph_from = PHFrom::charge_balance;
   /// Net charge of the analysis as reported, before anything gave way, eq per kg of water.
   double imbalance_eq_per_kg = 0;

@@ -190,10 +190,10 @@ struct ChangeTemperature {
 struct Concentrate {
   enum class By { cycles, evaporated, recovery };
   By by = By::cycles;
-  Given factor;                          ///< 4.2, or a ratio.
+  Given factor;                       ///< 4.2, or a ratio.
   std::vector<NamedGiven> rejection;  ///< Recovery only; what is not named is kept whole.
-  std::optional<Given> polarisation;     ///< At the membrane over in the bulk, >= 1.
-  bool keeps_permeate = false;           ///< The train goes on with the permeate.
+  std::optional<Given> polarisation;  ///< At the membrane over in the bulk, >= 1.
+  bool keeps_permeate = false;        ///< The train goes on with the permeate.
 };
 
 /// Takes a share of what is dissolved as the gas itself; what is left finds its equilibrium then.
@@ -203,7 +203,7 @@ struct Strip {
 
 /// Gases at constant partial pressure; those not named stay in the water.
 struct OpenTo {
-  Word atmosphere;                       ///< Empty when pressures are given.
+  Word atmosphere;                    ///< Empty when pressures are given.
   std::vector<NamedGiven> pressures;  ///< Pressure.
 };
 
@@ -308,7 +308,11 @@ struct Plant {
 /// Finds every mistake of the train that can be found without solving anything: unknown names,
 /// quantities of the wrong kind or out of range, per-time doses without a flow, names used twice.
 /// Returns false when there was one.
-[[nodiscard]] bool check_train(const Train& train, const Plant& plant, Diagnostics& diagnostics);
+[[nodiscard]] bool check_train(const Train& train,
+                               const Chemistry& chemistry,
+                               const Supplies& supplies,
+                               bool has_flow,
+                               Diagnostics& diagnostics);
 
 /// Something that entered or left the water, or formed in it.
 struct Portion {
@@ -357,8 +361,8 @@ inline constexpr int max_recycle_rounds = 2000;
 /// A pH is brought to its target within this.
 inline constexpr double ph_tolerance = 1e-9;
 
-/// Applies the steps in order. Expects check_train(train, plant) was satisfied (asserted where it
-/// matters) and every Blend has its water. Never throws; deterministic.
+/// Applies the steps in order. Expects that check_train was satisfied (asserted where it matters)
+/// and every Blend has its water. Never throws; deterministic.
 [[nodiscard]] TrainOutcome run_train(const Train& train, const Water& feed, const Plant& plant);
 
 }  // namespace ionledger

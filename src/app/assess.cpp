@@ -4,6 +4,7 @@
 #include "app/files.hpp"
 #include "app/inputs.hpp"
 #include "app/terminal.hpp"
+#include "app/train.hpp"
 #include "ionledger/assessment.hpp"
 #include "ionledger/equilibrium.hpp"
 #include "ionledger/report.hpp"
@@ -12,7 +13,8 @@ namespace ionledger::app {
 
 int assess_command(const AssessOptions& options) {
   Diagnostics diagnostics;
-  const std::optional<Inputs> inputs = load_inputs(options.file, options.models, diagnostics);
+  std::optional<Inputs> inputs = load_inputs(options.file, options.models, diagnostics);
+  if (inputs && !prepare_train(options.file, *inputs, diagnostics)) inputs.reset();
   std::optional<ClosedStream> closed;
   if (inputs) {
     closed =
@@ -24,8 +26,18 @@ int assess_command(const AssessOptions& options) {
     complain(shown_name(options.file) + ": no solution: " + closed->reason);
     return no_solution;
   }
-  const Assessment assessment =
-      assess(inputs->stream, *closed, inputs->models.chemistry, inputs->activity_model);
+  const Chemistry& chemistry = inputs->models.chemistry;
+  const Water feed = water_of(inputs->stream, *closed, chemistry);
+  const Plant plant =
+      plant_of(inputs->stream, feed, chemistry, inputs->activity_model, inputs->models.supplies);
+  const TrainOutcome outcome = run_train(inputs->train, feed, plant);
+  if (!outcome.is_complete()) {
+    complain(shown_name(options.file) + ": no solution: step " + outcome.failed_step + ": " +
+             outcome.reason);
+    return no_solution;
+  }
+  Assessment assessment = assess(inputs->stream, *closed, chemistry, inputs->activity_model);
+  assess_train(outcome, inputs->stream, plant, assessment);
   if (options.json) return print(json_report(assessment));
   TextStyle style;
   style.colour = wants_colour();

@@ -18,6 +18,7 @@ struct Inputs {
   Models models;
   Stream stream;
   ActivityModel activity_model;
+  Train train;  ///< As written: its blends have no water yet.
 };
 
 /// Reads models and plant file, makes the stream, finds the activity model the file asks for.

@@ -4,6 +4,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "assessment/assessed_state.hpp"
 #include "assessment/cautions.hpp"
 #include "assessment/ion_balance.hpp"
 #include "equilibrium/system.hpp"
@@ -27,6 +28,8 @@ const char* words_of(ClosedStream::PHFrom from) {
       return "measured";
     case ClosedStream::PHFrom::alkalinity_and_carbon:
       return "alkalinity and inorganic carbon";
+    case ClosedStream::PHFrom::hydrogen_balance:
+      return "hydrogen balance";
   }
   return "";
 }
@@ -269,6 +272,13 @@ class StateBuilder {
 
 }  // namespace
 
+AssessedState assessed_state(const Stream& stream,
+                             const ClosedStream& closed,
+                             const Chemistry& chemistry,
+                             const ActivityModel& model) {
+  return StateBuilder(stream, closed, chemistry, model).build();
+}
+
 Assessment assess(const Stream& stream,
                   const ClosedStream& closed,
                   const Chemistry& chemistry,
@@ -281,7 +291,7 @@ Assessment assess(const Stream& stream,
   result.activity_model = model.name;
   result.activity_title = model.title;
   result.max_ionic_strength = model.max_ionic_strength_molal;
-  result.states.push_back(StateBuilder(stream, closed, chemistry, model).build());
+  result.states.push_back(assessed_state(stream, closed, chemistry, model));
   return result;
 }
 

@@ -94,6 +94,15 @@ Json index_of(const IndexLine& line) {
           {"missing", line.missing}};
 }
 
+Json portion_of(const Portion& portion) {
+  return {{"what", portion.what},
+          {"mol_per_kg_feed", portion.mol},
+          {"kg_per_kg_feed", portion.kg},
+          {"mg_per_L", portion.mg_per_l},
+          {"kg_per_h", optional_number(portion.kg_per_h)},
+          {"mm_per_month", optional_number(portion.mm_per_month)}};
+}
+
 Json caution_of(const Caution& caution) {
   return {{"about", caution.about}, {"says", caution.says}};
 }
@@ -138,6 +147,12 @@ Json state_of(const AssessedState& state) {
   object["index_details"] = array_of(state.indices, index_of);
   object["cautions"] = array_of(state.cautions, caution_of);
   object["certificate"] = certificate_of(state.certificate);
+  object["added"] = array_of(state.added, portion_of);
+  object["removed"] = array_of(state.removed, portion_of);
+  object["deposited"] = array_of(state.deposited, portion_of);
+  object["solids_stay"] = state.solids_stay;
+  object["water_kg_per_kg_feed"] = state.water_kg_per_kg_feed;
+  object["flow_m3_per_h"] = optional_number(state.flow_m3_per_h);
   return object;
 }
 

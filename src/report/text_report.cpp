@@ -194,6 +194,7 @@ std::string text_report(const Assessment& assessment, const TextStyle& style) {
     const AssessedState& state = assessment.states[i];
     if (i > 0) page.blank();
     print_title(page, assessment, state);
+    print_step(page, state);
     print_essentials(page, state);
     print_ledger(page, state);
     print_minerals(page, state);

@@ -25,6 +25,9 @@ inline constexpr double narrowest_near_saturation = 0.10;
 /// True when hydrogen took up the whole imbalance, so that the balance cannot test the analysis.
 [[nodiscard]] bool balance_was_spent_on_ph(const AssessedState& state);
 
+/// What the step that led to this state added, removed and deposited; nothing for a water as
+/// received.
+void print_step(TextPage& page, const AssessedState& state);
 void print_ledger(TextPage& page, const AssessedState& state);
 void print_minerals(TextPage& page, const AssessedState& state);
 void print_species(TextPage& page, const AssessedState& state);

@@ -33,8 +33,16 @@ std::string listed(const std::vector<std::string>& names) {
 
 class TrainChecker {
  public:
-  TrainChecker(const Train& train, const Plant& plant, Diagnostics& diagnostics)
-      : train_(train), plant_(plant), diagnostics_(diagnostics) {}
+  TrainChecker(const Train& train,
+               const Chemistry& chemistry,
+               const Supplies& supplies,
+               bool has_flow,
+               Diagnostics& diagnostics)
+      : train_(train),
+        chemistry_(chemistry),
+        supplies_(supplies),
+        has_flow_(has_flow),
+        diagnostics_(diagnostics) {}
 
   bool run() {
     for (at_ = 0; at_ < train_.size(); ++at_) {
@@ -110,7 +118,7 @@ class TrainChecker {
   }
 
   void need_flow(const Given& given) {
-    if (plant_.feed_water_kg_per_s) return;
+    if (has_flow_) return;
     error(given.span,
           "an amount per time needs the flow of the stream",
           given.text,
@@ -132,8 +140,8 @@ class TrainChecker {
   }
 
   const Reagent* known_reagent(const Word& word) {
-    const Reagent* reagent = plant_.supplies.reagent(word.text);
-    if (reagent == nullptr) unknown("reagent", word, names_of(plant_.supplies.reagents));
+    const Reagent* reagent = supplies_.reagent(word.text);
+    if (reagent == nullptr) unknown("reagent", word, names_of(supplies_.reagents));
     return reagent;
   }
 
@@ -229,12 +237,11 @@ class TrainChecker {
   }
 
   void check_rejection(const NamedGiven& rejection) {
-    const Chemistry& chemistry = plant_.chemistry;
     check_share(rejection.value, true);
-    const int c = chemistry.constituent_index(rejection.name.text);
+    const int c = chemistry_.constituent_index(rejection.name.text);
     if (c < 0) {
-      unknown("constituent", rejection.name, names_of(chemistry.constituents));
-    } else if (chemistry.constituents[static_cast<std::size_t>(c)].kind !=
+      unknown("constituent", rejection.name, names_of(chemistry_.constituents));
+    } else if (chemistry_.constituents[static_cast<std::size_t>(c)].kind !=
                Constituent::Kind::total) {
       error(rejection.name.span,
             fmt::format("{} is not one constituent", rejection.name.text),
@@ -245,8 +252,8 @@ class TrainChecker {
 
   /// Gas names as keys.
   bool is_gas(const Word& word) {
-    if (gas_named(word.text, plant_.chemistry) >= 0) return true;
-    std::vector<std::string> keys = names_of(plant_.chemistry.gases);
+    if (gas_named(word.text, chemistry_) >= 0) return true;
+    std::vector<std::string> keys = names_of(chemistry_.gases);
     for (std::string& key : keys) std::replace(key.begin(), key.end(), ' ', '_');
     unknown("gas", word, keys);
     return false;
@@ -256,8 +263,8 @@ class TrainChecker {
     for (const NamedGiven& entry : strip.shares) {
       check_share(entry.value, true);
       if (!is_gas(entry.name)) continue;
-      const auto gas = static_cast<std::size_t>(gas_named(entry.name.text, plant_.chemistry));
-      if (dissolved_form(plant_.chemistry.gases[gas], plant_.chemistry) >= 0) continue;
+      const auto gas = static_cast<std::size_t>(gas_named(entry.name.text, chemistry_));
+      if (dissolved_form(chemistry_.gases[gas], chemistry_) >= 0) continue;
       error(entry.name.span,
             fmt::format("{} is not dissolved as itself", entry.name.text),
             entry.name.text,
@@ -266,9 +273,8 @@ class TrainChecker {
   }
 
   void check(const OpenTo& open) {
-    if (!open.atmosphere.text.empty() &&
-        plant_.supplies.atmosphere(open.atmosphere.text) == nullptr) {
-      unknown("atmosphere", open.atmosphere, names_of(plant_.supplies.atmospheres));
+    if (!open.atmosphere.text.empty() && supplies_.atmosphere(open.atmosphere.text) == nullptr) {
+      unknown("atmosphere", open.atmosphere, names_of(supplies_.atmospheres));
     }
     for (const NamedGiven& gas : open.pressures) {
       static_cast<void>(is_gas(gas.name));
@@ -297,8 +303,8 @@ class TrainChecker {
   }
 
   void check_mineral(const Word& word) {
-    if (plant_.chemistry.mineral_index(word.text) < 0) {
-      unknown("mineral", word, names_of(plant_.chemistry.minerals));
+    if (chemistry_.mineral_index(word.text) < 0) {
+      unknown("mineral", word, names_of(chemistry_.minerals));
     }
   }
 
@@ -334,8 +340,8 @@ class TrainChecker {
   void check(const PassBed& bed) { check_mineral(bed.mineral); }
 
   void check(const ExchangeIons& exchange) {
-    if (plant_.supplies.resin(exchange.resin.text) == nullptr) {
-      unknown("resin", exchange.resin, names_of(plant_.supplies.resins));
+    if (supplies_.resin(exchange.resin.text) == nullptr) {
+      unknown("resin", exchange.resin, names_of(supplies_.resins));
     }
     if (exchange.leakage) check_share(*exchange.leakage, true);
   }
@@ -349,7 +355,9 @@ class TrainChecker {
   }
 
   const Train& train_;
-  const Plant& plant_;
+  const Chemistry& chemistry_;
+  const Supplies& supplies_;
+  bool has_flow_ = false;
   Diagnostics& diagnostics_;
   std::size_t at_ = 0;
   bool ok_ = true;
@@ -357,8 +365,12 @@ class TrainChecker {
 
 }  // namespace
 
-bool check_train(const Train& train, const Plant& plant, Diagnostics& diagnostics) {
-  return TrainChecker(train, plant, diagnostics).run();
+bool check_train(const Train& train,
+                 const Chemistry& chemistry,
+                 const Supplies& supplies,
+                 bool has_flow,
+                 Diagnostics& diagnostics) {
+  return TrainChecker(train, chemistry, supplies, has_flow, diagnostics).run();
 }
 
 }  // namespace ionledger
