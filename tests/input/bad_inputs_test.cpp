@@ -37,7 +37,8 @@ std::vector<fs::path> bad_inputs() {
   return paths;
 }
 
-/// What is said about `path`: by the reader, else by the chemistry, else where it is solved.
+/// What is said about `path`: by the reader, else by the chemistry, else by the check of its train,
+/// else where it is solved.
 std::string messages(const fs::path& path) {
   Diagnostics diagnostics;
   const std::string name = "tests/bad_inputs/" + path.filename().string();
@@ -46,6 +47,12 @@ std::string messages(const fs::path& path) {
   if (!plant) return render(diagnostics);
   const Chemistry& chemistry = models().chemistry;
   if (const auto stream = make_stream(plant->analysis, chemistry, diagnostics)) {
+    const bool is_sound = check_train(plant->train,
+                                      chemistry,
+                                      models().supplies,
+                                      plant->analysis.flow.has_value(),
+                                      diagnostics);
+    if (!is_sound) return render(diagnostics);
     const auto closed = close_stream(*stream, chemistry, default_activity_model(), diagnostics);
     CHECK_FALSE_MESSAGE(closed, "nothing was found wrong in " << name);
   }
