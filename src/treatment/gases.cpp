@@ -154,10 +154,12 @@ class GasSpace {
     std::vector<double> first(chemistry.gases.size(), 0.0);
     for (const HeldPressure& gas : pressures_of(space.gas, bench)) first[gas.gas] = gas.bar;
     for (std::size_t g = 0; g < first.size(); ++g) {
-      if (!(first[g] > 0) && !can_give_off(chemistry.gases[g], water)) continue;
-      held_.push_back({g, std::max(first[g], least_bar)});
+      const Gas& gas = chemistry.gases[g];
+      const bool is_in_water = can_give_off(gas, water);
+      if (!(first[g] > 0) && !is_in_water) continue;
+      held_.push_back({g, is_in_water ? pressure_over(g) : first[g]});
       first_bar_.push_back(first[g]);
-      scale_.push_back(first[g] * mol_per_bar_ + most_that_is_there(chemistry.gases[g]));
+      scale_.push_back(first[g] * mol_per_bar_ + most_that_is_there(gas));
     }
   }
 
@@ -184,8 +186,19 @@ class GasSpace {
   static constexpr int max_rounds = 200;
   static constexpr double tolerance = 1e-12;  // of what there is of the gas, in water and space
   static constexpr double root_tolerance = 1e-14;
-  static constexpr double least_bar = 1e-30;
-  static constexpr double step = 4.0;  // of ln p, while the bracket is looked for
+  static constexpr double bracket_step = 4;  // of ln p
+  static constexpr int max_bracket_steps = 100;
+
+  /// Partial pressure over the water as it stands, bar.
+  [[nodiscard]] double pressure_over(std::size_t g) const {
+    const Gas& gas = bench_.chemistry().gases[g];
+    double ln_bar = gas.water_exponent * std::log(water_.solution.water_activity) -
+                    ln_dissolution(bench_.chemistry(), water_.temperature)[g];
+    for (std::size_t i = 0; i < gas.dissolution.size(); ++i) {
+      if (gas.dissolution[i] != 0) ln_bar += gas.dissolution[i] * water_.solution.ln_activity[i];
+    }
+    return std::exp(ln_bar);
+  }
 
   /// mol of the gas that the components of one kg of water could make.
   [[nodiscard]] double most_that_is_there(const Gas& gas) const {
@@ -210,12 +223,11 @@ class GasSpace {
   bool settle(std::size_t k) {
     Ordinate low{std::log(held_[k].bar), 0};
     low.f = excess(k, low.x);
-    const double direction = low.f > 0 ? -1 : 1;
     Ordinate high = low;
-    while (!failed_ && high.f * direction < 0) {
-      low = high;
-      high.x += direction * step;
-      if (high.x < std::log(least_bar) - 2 * step) break;  // nothing of it anywhere
+    for (int step = 0; step < max_bracket_steps && !failed_ && (high.f > 0) == (low.f > 0);
+         ++step) {
+      if (step > 0) low = high;
+      high.x += low.f > 0 ? -bracket_step : bracket_step;
       high.f = excess(k, high.x);
     }
     if (failed_) return false;

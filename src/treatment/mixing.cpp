@@ -11,7 +11,7 @@ namespace ionledger {
 namespace {
 
 constexpr double first_try_kg_per_kg = 1e-9;  // of product per kg of water, when a pH is looked for
-constexpr double last_try_kg_per_kg = 4;
+constexpr double last_try_kg_per_kg = 1;
 constexpr double wrong_way_ph = 0.01;
 
 /// Moles of the active substance behind one mole of the formula after "as": both hold the one
@@ -116,7 +116,7 @@ std::optional<double> kg_for_ph(const Reagent& reagent,
   for (double kg = first_try_kg_per_kg * water.water_kg; kg <= last_try_kg_per_kg * water.water_kg;
        kg *= 2) {
     const Ordinate high{kg, miss(kg)};
-    if (!solves) return std::nullopt;
+    if (!solves) break;
     if (high.f * upwards >= 0) return root_between(low, high, ph_tolerance, miss);
     if ((high.f - low.f) * upwards < -wrong_way_ph) {
       return bench.fail(fmt::format("{} moves the pH from {:.2f} to {:.2f}, away from {:g}",

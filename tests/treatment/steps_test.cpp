@@ -213,9 +213,11 @@ open_to = "air"
   TEST_CASE("a sealed gas space holds what the water gave off, at one pressure for both") {
     const TrainRun run = run_text(river + step("headspace = \"2 L/L\"\nof = \"air\""));
     const double bar = partial_pressure_bar(run.last().solution, "carbon dioxide");
-    const double given_off = run.step("step_1").record.removed[0].mol;
     const double litres = 2 * litres_per_kg_water(run.feed, models().chemistry);
-    CHECK(run.step("step_1").record.removed[0].what == "carbon dioxide");
+    double given_off = 0;
+    for (const Portion& gas : run.step("step_1").record.removed) {
+      if (gas.what == "carbon dioxide") given_off = gas.mol;
+    }
     // n = (p - p0) V / (R T)
     CHECK(given_off == rel((bar - 0.00042) * litres / (0.08314462618 * 288.15), 1e-9));
   }
