@@ -47,11 +47,8 @@ std::string messages(const fs::path& path) {
   if (!plant) return render(diagnostics);
   const Chemistry& chemistry = models().chemistry;
   if (const auto stream = make_stream(plant->analysis, chemistry, diagnostics)) {
-    const bool is_sound = check_train(plant->train,
-                                      chemistry,
-                                      models().supplies,
-                                      plant->analysis.flow.has_value(),
-                                      diagnostics);
+    const bool is_sound = check_train(
+        plant->train, chemistry, models().supplies, plant->analysis.flow.has_value(), diagnostics);
     if (!is_sound) return render(diagnostics);
     const auto closed = close_stream(*stream, chemistry, default_activity_model(), diagnostics);
     CHECK_FALSE_MESSAGE(closed, "nothing was found wrong in " << name);
