@@ -94,12 +94,12 @@ class StepReader {
     Given result;
     result.span = value.span();
     result.text = value.written();
-    result.quantity.number = result.quantity.si_value = value.number(expected).value_or(0);
+    result.quantity.number = result.quantity.value_in_si = value.number(expected).value_or(0);
     return result;
   }
 
   [[nodiscard]] std::vector<NamedGiven> named(TomlCursor& table,
-                                                 const QuantityExample& example) const {
+                                              const QuantityExample& example) const {
     std::vector<NamedGiven> result;
     for (const TomlCursor& entry : table.entries()) {
       result.push_back({{entry.key(), entry.key_span()}, given(entry, example)});

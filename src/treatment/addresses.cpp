@@ -103,7 +103,7 @@ std::variant<ConcentrationFactor, UnitError> read_concentration_factor(std::stri
     ConcentrationFactor factor{known.by, std::get<WrittenQuantity>(read)};
     if (factor.quantity.meaning != Meaning::ratio) break;
     if (!known.is_ratio) {
-      factor.quantity.si_value = factor.quantity.number;
+      factor.quantity.value_in_si = factor.quantity.number;
       factor.quantity.unit.clear();
     }
     factor.quantity.unit += factor.quantity.unit.empty() ? "" : " ";

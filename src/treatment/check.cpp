@@ -50,7 +50,8 @@ class TrainChecker {
       check_name(step);
       Step copy = step;
       for (const auto& [key, given] : quantities_of(copy.action)) {
-        if (given->quantity.si_value < 0 && key.rfind("settle.", 0) != 0 && key != "bring_pH_to") {
+        if (given->quantity.value_in_si < 0 && key.rfind("settle.", 0) != 0 &&
+            key != "bring_pH_to") {
           error(given->span, key + " is negative", given->text, "zero or more");
         }
       }
@@ -108,7 +109,7 @@ class TrainChecker {
 
   void check_share(const Given& given, bool may_be_all) {
     if (!is_one_of<Ratio>(given, "a share such as \"30 %\"")) return;
-    const double share = given.quantity.si_value;
+    const double share = given.quantity.value_in_si;
     if (share > 1 || (share == 1 && !may_be_all)) {
       error(given.span,
             fmt::format("\"{}\" is too large a share", given.text),
@@ -201,7 +202,7 @@ class TrainChecker {
 
   void check(const ChangeTemperature& change) {
     if (!is_one_of<Temperature>(change.to, "a temperature such as \"46 degC\"")) return;
-    const double degc = in_celsius(kelvin(change.to.quantity.si_value));
+    const double degc = in_celsius(kelvin(change.to.quantity.value_in_si));
     if (degc >= lowest_degc && degc <= highest_degc) return;
     error(change.to.span,
           "the properties of water are not known at this temperature",
@@ -212,7 +213,7 @@ class TrainChecker {
   void check(const Concentrate& step) {
     const WrittenQuantity& factor = step.factor.quantity;
     const bool is_cycles = step.by == Concentrate::By::cycles;
-    if (is_cycles ? factor.number < 1 : factor.si_value >= 1) {
+    if (is_cycles ? factor.number < 1 : factor.value_in_si >= 1) {
       error(step.factor.span,
             is_cycles ? "less than one cycle is no concentration" : "no water would be left",
             step.factor.text,
@@ -279,7 +280,7 @@ class TrainChecker {
     for (const NamedGiven& gas : open.pressures) {
       static_cast<void>(is_gas(gas.name));
       if (!is_one_of<Pressure>(gas.value, "a partial pressure such as \"0.0004 bar\"")) continue;
-      if (gas.value.quantity.si_value > 0) continue;
+      if (gas.value.quantity.value_in_si > 0) continue;
       error(gas.value.span,
             "a gas at no pressure would be taken out to the last molecule",
             gas.value.text,
@@ -293,7 +294,7 @@ class TrainChecker {
     const bool is_volume_ratio =
         volume.dimension == DimensionExponents{} &&
         (volume.meaning == Meaning::plain || volume.meaning == Meaning::ratio);
-    if (!is_volume_ratio || !(volume.si_value > 0)) {
+    if (!is_volume_ratio || !(volume.value_in_si > 0)) {
       error(space.volume.span,
             "a gas space is a positive volume per volume of water",
             space.volume.text,
@@ -329,7 +330,7 @@ class TrainChecker {
     }
     if (!settle.area) return;
     constexpr DimensionExponents area = {2, 0, 0, 0, 0, 0, 0};
-    if (settle.area->quantity.dimension != area || !(settle.area->quantity.si_value > 0)) {
+    if (settle.area->quantity.dimension != area || !(settle.area->quantity.value_in_si > 0)) {
       error(settle.area->span, "this is no area", settle.area->text, "such as \"120 m2\"");
     } else {
       need_flow(*settle.area);

@@ -33,7 +33,7 @@ std::vector<double> passages(const Concentrate& step, const Chemistry& chemistry
     const int c = chemistry.constituent_index(rejection.name.text);
     const Constituent& constituent = chemistry.constituents[static_cast<std::size_t>(c)];
     const int i = chemistry.species_index(constituent.basis_species);
-    passage[static_cast<std::size_t>(i)] = 1 - rejection.value.quantity.si_value;
+    passage[static_cast<std::size_t>(i)] = 1 - rejection.value.quantity.value_in_si;
   }
   return passage;
 }
@@ -41,7 +41,7 @@ std::vector<double> passages(const Concentrate& step, const Chemistry& chemistry
 /// The concentrate of a membrane: ions by C = C_f (1 - y SP)/(1 - y), gases as in the feed. What
 /// the analysis leaves unbalanced is taken for an ion that does not pass.
 Amounts concentrate_of(const Concentrate& step, const Water& water, const Chemistry& chemistry) {
-  const double recovery = step.factor.quantity.si_value;
+  const double recovery = step.factor.quantity.value_in_si;
   const std::vector<double> gases = in_gas_form(water, chemistry);
   const std::vector<double> passage = passages(step, chemistry);
   Amounts kept = amounts_of(water);
@@ -109,7 +109,7 @@ int dissolved_form(const Gas& gas, const Chemistry& chemistry) {
 Applied apply(const Concentrate& step, const Water& water, Workbench& bench, StepRecord& record) {
   if (step.by == Concentrate::By::recovery) return through_membrane(step, water, bench, record);
   const double left = step.by == Concentrate::By::cycles ? 1 / step.factor.quantity.number
-                                                         : 1 - step.factor.quantity.si_value;
+                                                         : 1 - step.factor.quantity.value_in_si;
   Amounts gone = bench.none();
   gone.water_kg = water.water_kg * (1 - left);
   Amounts amounts = amounts_of(water);

@@ -21,7 +21,7 @@ Applied apply(const ExchangeIons& exchange,
               StepRecord& record) {
   const Chemistry& chemistry = bench.chemistry();
   const Resin& resin = *bench.plant().supplies.resin(exchange.resin.text);
-  const double taken_share = exchange.leakage ? 1 - exchange.leakage->quantity.si_value : 1;
+  const double taken_share = exchange.leakage ? 1 - exchange.leakage->quantity.value_in_si : 1;
   Amounts amounts = amounts_of(water);
   for (const Resin::Exchange& part : resin.exchanges) {
     std::vector<std::pair<std::size_t, double>> taken;

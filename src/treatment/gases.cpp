@@ -27,7 +27,7 @@ std::vector<HeldPressure> pressures_of(const OpenTo& open, const Workbench& benc
   if (open.atmosphere.text.empty()) {
     for (const NamedGiven& gas : open.pressures) {
       held.push_back({static_cast<std::size_t>(gas_named(gas.name.text, chemistry)),
-                      gas.value.quantity.si_value / pascal_per_bar});
+                      gas.value.quantity.value_in_si / pascal_per_bar});
     }
     return held;
   }
@@ -93,7 +93,7 @@ Applied apply(const Strip& strip, const Water& water, Workbench& bench, StepReco
             .gases[static_cast<std::size_t>(gas_named(entry.name.text, bench.chemistry()))];
     const auto form = static_cast<std::size_t>(dissolved_form(gas, bench.chemistry()));
     const double mol =
-        water.water_kg * water.solution.molality[form] * entry.value.quantity.si_value;
+        water.water_kg * water.solution.molality[form] * entry.value.quantity.value_in_si;
     book_gas(gas, mol, water, bench, amounts, record);
   }
   return bench.water(amounts, water.temperature, water.pressure);
@@ -115,7 +115,7 @@ Applied apply(const ChangeTemperature& change,
               const Water& water,
               Workbench& bench,
               StepRecord& record) {
-  const Temperature to = kelvin(change.to.quantity.si_value);
+  const Temperature to = kelvin(change.to.quantity.value_in_si);
   if (change.cools != (in_kelvin(to) < in_kelvin(water.temperature))) {
     record.cautions.push_back({"temperature",
                                fmt::format("The water came at {:.1f} degC, so this step {} it.",
@@ -147,7 +147,7 @@ class GasSpace {
   GasSpace(const Headspace& space, const Water& water, Workbench& bench)
       : water_(water),
         bench_(bench),
-        mol_per_bar_(space.volume.quantity.si_value *
+        mol_per_bar_(space.volume.quantity.value_in_si *
                      litres_per_kg_water(water, bench.chemistry()) /
                      (gas_constant_l_bar * in_kelvin(water.temperature))) {
     const Chemistry& chemistry = bench.chemistry();

@@ -51,20 +51,20 @@ double product_kg(const Dose& dose, const Reagent& reagent, const Water& water, 
   const double kg_per_mol = reagent.active_molar_mass_g / 1000;
   double kg = 0;
   if (const auto mass = to<Density>(written); std::holds_alternative<Density>(mass)) {
-    kg = written.si_value * litres / 1000 * mass_factor(written, reagent);
+    kg = written.value_in_si * litres / 1000 * mass_factor(written, reagent);
   } else if (std::holds_alternative<MassFlow>(to<MassFlow>(written))) {
-    kg = written.si_value / feed_kg_per_s * mass_factor(written, reagent);
+    kg = written.value_in_si / feed_kg_per_s * mass_factor(written, reagent);
   } else if (std::holds_alternative<VolumeFlow>(to<VolumeFlow>(written))) {
-    kg = written.si_value * 1000 * density / feed_kg_per_s;
+    kg = written.value_in_si * 1000 * density / feed_kg_per_s;
   } else if (std::holds_alternative<AmountPerVolume>(to<AmountPerVolume>(written))) {
-    kg = written.si_value * litres / 1000 * kg_per_mol;
+    kg = written.value_in_si * litres / 1000 * kg_per_mol;
   } else if (std::holds_alternative<AmountPerMass>(to<AmountPerMass>(written))) {
-    kg = written.si_value * water.water_kg * kg_per_mol;
+    kg = written.value_in_si * water.water_kg * kg_per_mol;
   } else if (written.meaning == Meaning::mass_fraction) {
-    kg = written.si_value * mass_kg(amounts_of(water), bench.chemistry()) *
+    kg = written.value_in_si * mass_kg(amounts_of(water), bench.chemistry()) *
          mass_factor(written, reagent);
   } else {
-    kg = written.si_value * litres * density;  // mL/m3: volume of product per volume of water
+    kg = written.value_in_si * litres * density;  // mL/m3: volume of product per volume of water
   }
   return dose.is_of_active ? kg / reagent.ingredients.front().share : kg;
 }
@@ -158,12 +158,12 @@ Applied apply(const Blend& blend, const Water& water, Workbench& bench, StepReco
   Water other = *blend.water;
   double water_kg = 0;
   if (blend.share) {
-    const double share = blend.share->quantity.si_value;
+    const double share = blend.share->quantity.value_in_si;
     if (share >= 1) return bench.fail("a share of all leaves nothing of the water itself");
     water_kg =
         share / (1 - share) * bench.litres(water) / litres_per_kg_water(other, bench.chemistry());
   } else {
-    water_kg = blend.flow->quantity.si_value * 1000 /
+    water_kg = blend.flow->quantity.value_in_si * 1000 /
                litres_per_kg_water(other, bench.chemistry()) / *bench.plant().feed_water_kg_per_s;
   }
   other.water_kg = water_kg;
@@ -187,7 +187,7 @@ Applied apply(const BringPH& bring, const Water& water, Workbench& bench, StepRe
 
 /// What is returned is the `removed` of this step; the train mixes it in where it goes.
 Applied apply(const Recycle& recycle, const Water& water, Workbench& bench, StepRecord& record) {
-  const double share = recycle.share.quantity.si_value;
+  const double share = recycle.share.quantity.value_in_si;
   if (share >= 1) return bench.fail("all of the water returns, so none leaves");
   Water returned = water;
   returned.water_kg = share * water.water_kg;

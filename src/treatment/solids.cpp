@@ -68,7 +68,7 @@ void add_thickness(Portion& deposit, const Settle& settle, const Workbench& benc
   if (density == densities.end()) return;
   const double m3_per_month =
       *deposit.kg_per_h * hours_per_month / (1000 * density->second.kg_per_l);
-  deposit.mm_per_month = 1000 * m3_per_month / settle.area->quantity.si_value;
+  deposit.mm_per_month = 1000 * m3_per_month / settle.area->quantity.value_in_si;
 }
 
 }  // namespace
@@ -116,7 +116,7 @@ Applied apply(const RemoveSolids& remove,
               StepRecord& record) {
   Water after = water;
   for (std::size_t m = 0; m < after.solids.size(); ++m) {
-    const double gone = after.solids[m] * remove.share.quantity.si_value;
+    const double gone = after.solids[m] * remove.share.quantity.value_in_si;
     if (gone == 0) continue;
     record.removed.push_back(solid_portion(m, gone * water.water_kg, water, bench));
     after.solids[m] -= gone;

@@ -70,7 +70,7 @@ class TrainRunner {
   Applied applied(std::size_t k, const Water& water, StepRecord& record) {
     if (const auto* recycle = std::get_if<Recycle>(&train_[k].action)) {
       Water returned = water;
-      returned.water_kg *= recycle->share.quantity.si_value;
+      returned.water_kg *= recycle->share.quantity.value_in_si;
       is_steady_ = is_steady_ && returning_[k] && is_same(*returning_[k], returned);
       returning_[k] = std::move(returned);
     }

@@ -67,7 +67,7 @@ TEST_SUITE("treatment/steps") {
     const double second = twice.step("step_2").record.added[0].kg;
     TrainRun exact = prepared(river + step(dose + "\"0.5 mmol/kg\""), default_activity_model());
     const double kg_per_mol = once.step("step_1").record.added[0].kg / 5e-4;
-    quantity_at(exact.train, "step_1.active")->si_value = (first + second) / kg_per_mol;
+    quantity_at(exact.train, "step_1.active")->value_in_si = (first + second) / kg_per_mol;
     run_checked(exact);
     check_same(twice.last(), exact.last(), 1e-12);
   }
@@ -367,7 +367,7 @@ open_to = "air"
     CHECK(quantity_at(run.train, "acid.active") == nullptr);
     run_checked(run);
     const double before = run.step("acid").record.added[0].kg;
-    quantity_at(run.train, "acid.amount")->si_value *= 2;
+    quantity_at(run.train, "acid.amount")->value_in_si *= 2;
     run_checked(run);
     CHECK(run.step("acid").record.added[0].kg == rel(2 * before, 1e-12));
   }
