@@ -45,8 +45,7 @@ class IndexDraft {
   }
   /// The same for an input that is divided by or whose logarithm is taken: zero counts as missing.
   double take_positive(const char* name, std::optional<double> value, const char* unit = "") {
-    if (value && !(*value > 0)) value.reset();
-    return take(name, value, unit);
+    return value.value_or(0) > 0 ? take(name, *value, unit) : take(name, std::nullopt, unit);
   }
   /// A number made of the inputs that a reader wants to see among them.
   double show(const char* name, double value) {

@@ -303,12 +303,22 @@ std::optional<TomlCursor> TomlCursor::require(std::string_view key, const std::s
   return value;
 }
 
+namespace {
+
+/// A text over several lines is one paragraph.
+std::string one_line(std::string text) {
+  std::replace(text.begin(), text.end(), '\n', ' ');
+  return text;
+}
+
+}  // namespace
+
 std::string TomlCursor::text_at(std::string_view key, const std::string& expected) {
   const auto value = require(key, expected);
   if (!value) return "";
   const auto text = value->text(expected);
   if (text && text->empty()) value->error(fmt::format("{} is blank", value->path_), expected);
-  return text.value_or("");
+  return one_line(text.value_or(""));
 }
 
 double TomlCursor::number_at(std::string_view key, const std::string& expected) {
@@ -318,7 +328,7 @@ double TomlCursor::number_at(std::string_view key, const std::string& expected) 
 
 std::string TomlCursor::text_if(std::string_view key, const std::string& expected) {
   const auto value = find(key);
-  return value ? value->text(expected).value_or("") : "";
+  return value ? one_line(value->text(expected).value_or("")) : "";
 }
 
 std::optional<double> TomlCursor::number_if(std::string_view key, const std::string& expected) {

@@ -106,6 +106,7 @@ class TomlCursor {
   [[nodiscard]] std::optional<TomlCursor> require(std::string_view key,
                                                   const std::string& expected);
   /// The value under `key`, or an error that it is missing, blank or of another kind; then "" or 0.
+  /// The lines of a long text become one, joined by spaces.
   [[nodiscard]] std::string text_at(std::string_view key, const std::string& expected);
   [[nodiscard]] double number_at(std::string_view key, const std::string& expected);
   /// The value under `key`, which may be left out.
