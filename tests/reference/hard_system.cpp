@@ -131,13 +131,56 @@ bool read_totals(const json& definition, HardSystem& hard, std::string& problem)
   return true;
 }
 
-/// Net charge of the dissolved species and its gross size.
+/// Net charge of the dissolved species.
 double charge_of(const HardSystem& hard, const solver::Outcome& outcome) {
   double charge = 0;
   for (std::size_t j = 0; j < hard.species_charge.size(); ++j) {
     charge += hard.species_charge[j] * std::exp(outcome.ln_amount[j]);
   }
   return charge;
+}
+
+/// Root of a function with one change of sign above `low`: secant steps inside a bracket, bisection
+/// every third time. The last evaluation is at the root.
+template <class Function>
+void find_root(double low, double high, const Function& function) {
+  double at_low = function(low);
+  double at_high = function(high);
+  while (at_low * at_high > 0 && high < 1e6) {
+    low = high;
+    at_low = at_high;
+    high *= 10;
+    at_high = function(high);
+  }
+  for (int step = 0; step < 200 && high - low > 1e-16 * high; ++step) {
+    double middle = low - at_low * (high - low) / (at_high - at_low);
+    if (step % 3 == 2 || !(middle > low && middle < high)) middle = 0.5 * (low + high);
+    if (middle <= low || middle >= high) return;
+    const double here = function(middle);
+    if (here == 0) return;
+    const bool same_side = (here > 0) == (at_low > 0);
+    (same_side ? low : high) = middle;
+    (same_side ? at_low : at_high) = here;
+  }
+}
+
+/// An ideal mixture given as energies c / RT and element rows: K_j = exp(-c_j).
+HardSystem read_mixture(const std::string& id, const json& entry) {
+  HardSystem hard;
+  hard.id = id;
+  hard.is_mixture = true;
+  hard.species = entry["species"].get<std::vector<std::string>>();
+  const json& rows = entry["A_rows_H_N_O"];
+  hard.components = {"H", "N", "O"};
+  hard.system.n_components = static_cast<int>(hard.components.size());
+  hard.system.n_species = static_cast<int>(hard.species.size());
+  for (std::size_t j = 0; j < hard.species.size(); ++j) {
+    for (const json& row : rows) hard.system.stoichiometry.push_back(row[j].get<double>());
+    hard.conditions.ln_k.push_back(-number(entry["c_over_RT"][j]));
+  }
+  for (const json& total : entry["b"]) hard.the_case.totals.push_back(total.get<double>());
+  hard.expected = entry;
+  return hard;
 }
 
 }  // namespace
@@ -162,6 +205,7 @@ std::optional<HardSystem> read_hard_system(const json& file,
     problem = "no system named " + id;
     return std::nullopt;
   }
+  if (entry->contains("A_rows_H_N_O")) return read_mixture(id, *entry);
   const json definition = uniform_definition(*entry);
   if (!definition.contains("components") || !definition.contains("totals")) {
     problem = id + " is not given as components, species and totals";
@@ -187,40 +231,30 @@ std::optional<HardSystem> read_hard_system(const json& file,
 }
 
 solver::Outcome solve_hard_system(const HardSystem& hard, const solver::Start& start) {
-  solver::Outcome outcome = solver::solve(hard.system, hard.conditions, hard.the_case, start);
-  if (hard.closed_by_charge < 0) return outcome;
-  // The net charge rises or falls steadily with the total of an ion: secant inside a bracket.
   HardSystem trial = hard;
-  const auto i = static_cast<std::size_t>(hard.closed_by_charge);
-  const auto charge_at = [&](double total) {
-    trial.the_case.totals[i] = total;
+  solver::Outcome outcome;
+  const auto solve = [&] {
     outcome = solver::solve(trial.system, trial.conditions, trial.the_case, start);
-    return charge_of(trial, outcome);
   };
-  double low = 0;
-  double charge_low = charge_at(low);
-  double high = 1e-6;
-  double charge_high = charge_at(high);
-  while (charge_low * charge_high > 0 && high < 1e3) {
-    low = high;
-    charge_low = charge_high;
-    high *= 10;
-    charge_high = charge_at(high);
-  }
-  for (int step = 0; step < 200 && high - low > 1e-16 * high; ++step) {
-    const double secant = low - charge_low * (high - low) / (charge_high - charge_low);
-    const bool usable = step % 3 != 2 && secant > low && secant < high;
-    const double middle = usable ? secant : 0.5 * (low + high);
-    if (middle <= low || middle >= high) break;
-    const double charge = charge_at(middle);
-    if (charge == 0) break;
-    if (charge * charge_low > 0) {
-      low = middle;
-      charge_low = charge;
-    } else {
-      high = middle;
-      charge_high = charge;
-    }
+  if (hard.closed_by_charge >= 0) {
+    // The net charge rises or falls steadily with the total of an ion.
+    find_root(0, 1e-6, [&](double total) {
+      trial.the_case.totals[static_cast<std::size_t>(hard.closed_by_charge)] = total;
+      solve();
+      return charge_of(trial, outcome);
+    });
+  } else if (hard.is_mixture) {
+    find_root(1e-3, 2e-3, [&](double size) {
+      for (std::size_t j = 0; j < hard.conditions.ln_k.size(); ++j) {
+        trial.conditions.ln_k[j] = hard.conditions.ln_k[j] + std::log(size);
+      }
+      solve();
+      double sum = 0;
+      for (const double ln_amount : outcome.ln_amount) sum += std::exp(ln_amount);
+      return sum - size;
+    });
+  } else {
+    solve();
   }
   return outcome;
 }

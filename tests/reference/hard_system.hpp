@@ -21,6 +21,8 @@ struct HardSystem {
   solver::Case the_case;
   /// Component whose total follows from electroneutrality, or -1.
   int closed_by_charge = -1;
+  /// Species are mole fractions of one ideal mixture of unknown size, c_j = N exp(ln K_j + nu_j x).
+  bool is_mixture = false;
   std::vector<double> species_charge;  ///< Empty when the file gives no charges.
   nlohmann::json expected;             ///< The file's own answer: "solution" or "expected".
 };
@@ -34,7 +36,8 @@ struct HardSystem {
                                                          const std::string& id,
                                                          std::string& problem);
 
-/// Solves it; a total closed by charge is found by a bracketed secant around the solver.
+/// Solves it; a total closed by charge, or the size of a mixture, is found by a bracketed secant
+/// around the solver.
 [[nodiscard]] solver::Outcome solve_hard_system(const HardSystem& hard,
                                                 const solver::Start& start = {});
 
