@@ -70,21 +70,31 @@ class SafePath {
            prepared_.rules[m] == PhaseRule::may_form;
   }
 
-  /// The set of the last solve first; the interior point method when exchanges do not settle it.
+  /// The set of the last solve first; then, from the solution without any phase, the interior
+  /// point method; and when that does not settle, one exchange after the other.
   bool solve_phases() {
     if (!prepared_.has_phases) return solve_frozen(frozen_, iterations_);
     if (warm_ && exchange_phases()) return true;
-    (void)find_present_phases(frozen_, iterations_);
-    warm_ = exchange_phases();
-    if (!warm_) contradicts_ = imposed_contradict();
+    release_all();
+    const bool without = solve_frozen(frozen_, iterations_);
+    const std::vector<double> x = frozen_.x;
+    warm_ = find_present_phases(frozen_, iterations_) && exchange_phases();
+    if (!warm_ && without) {
+      release_all();
+      frozen_.x = x;
+      warm_ = exchange_phases();
+    }
+    if (!warm_) {
+      release_all();
+      contradicts_ = !meet_limits(frozen_);
+    }
     return warm_;
   }
 
-  bool imposed_contradict() {
+  void release_all() {
     for (int m = 0; m < kernel_.n_phases; ++m) {
       if (may_form(m)) frozen_.held[m] = 0;
     }
-    return !meet_limits(frozen_);
   }
 
   /// Solves with the held set, releases the phase with the most negative amount or holds the most

@@ -8,9 +8,13 @@
 #include <numbers>
 #include <string>
 
+#include "solver/certificate.hpp"
 #include "solver/compact_system.hpp"
 #include "solver/compiled.hpp"
+#include "solver/feasibility.hpp"
+#include "solver/prepare.hpp"
 #include "solver/recheck.hpp"
+#include "solver/safe_path.hpp"
 #include "support/compare.hpp"
 
 namespace {
@@ -123,6 +127,37 @@ TEST_SUITE("solver/streams") {
         check(n, tally);
       }
     }
+  }
+
+  TEST_CASE("the safe path alone solves random streams, with and without phases") {
+    const CompactSystem compact = compact_system(0.017);
+    const Kernel kernel = compile(compact.system, compact.conditions);
+    std::mt19937_64 random(seed);
+    CertificateWork work;
+    resize(work, kernel);
+    const int n = number_of_streams() / 20;
+    int good = 0;
+    for (int k = 0; k < n; ++k) {
+      Case a_case;
+      a_case.totals = random_totals(random, k % 2);
+      if (k % 4 > 1) {
+        a_case.phase_rules.assign(static_cast<std::size_t>(compact.system.n_phases),
+                                  PhaseRule::may_form);
+      }
+      Prepared prepared;
+      REQUIRE(prepare(kernel, a_case, prepared));
+      Feasibility kind{};
+      REQUIRE(settle_by_signs(kernel, prepared, kind));
+      Point point;
+      set_start(kernel, prepared, {}, point);
+      if (!run_safe_path(kernel, prepared, point).solved) continue;
+      Certificate certificate;
+      compute_amounts(kernel, prepared, point, work);
+      certify(kernel, prepared, point, work, certificate);
+      if (certificate.good) ++good;
+    }
+    MESSAGE("safe path, seed " << seed << ": " << good << " of " << n);
+    CHECK(good == n);
   }
 
   TEST_CASE("a warm start gives the same answer in fewer iterations") {
