@@ -198,7 +198,7 @@ class IndexBook {
   }
   IndexLine ryznar() const {
     IndexDraft draft({"ryznar",
-                      "Ryznar stability index, with the pHs corrected for activity",
+                      "Ryznar stability index, corrected for activity",
                       "",
                       "2 pHs - pH",
                       "Ryznar 1944"});
@@ -206,7 +206,7 @@ class IndexBook {
   }
   IndexLine ryznar_practice() const {
     IndexDraft draft({"ryznar_practice",
-                      "Ryznar stability index, with the pHs of practice",
+                      "Ryznar stability index, formula of practice",
                       "",
                       "2 pHs - pH",
                       "Ryznar 1944"});
@@ -214,7 +214,7 @@ class IndexBook {
   }
   IndexLine puckorius() const {
     IndexDraft draft({"puckorius",
-                      "Puckorius scaling index, with the pHs of practice",
+                      "Puckorius scaling index, formula of practice",
                       "",
                       "2 pHs - pHeq; pHeq = 1.465 log10(alkalinity) + 4.54",
                       "Puckorius and Brooke 1991"});
@@ -223,11 +223,12 @@ class IndexBook {
     return draft.value(2 * ph_s - draft.show("pHeq", puckorius_equilibrium_ph(alkalinity)));
   }
   IndexLine precipitation_potential() const {
-    IndexDraft draft({"ccpp_mg_per_L_as_CaCO3",
-                      "Calcium carbonate precipitation potential, closed to the air",
-                      "mg/L as CaCO3",
-                      "calcium carbonate that forms (+) or dissolves (-) until equilibrium",
-                      "Standard Methods 2330 C, by equilibrium"});
+    IndexDraft draft(
+        {"ccpp_mg_per_L_as_CaCO3",
+         "Calcium carbonate precipitation potential",
+         "mg/L as CaCO3",
+         "calcium carbonate that forms (+) or dissolves (-) until equilibrium, closed to the air",
+         "Standard Methods 2330 C, by equilibrium"});
     draft.take("calcium", total_meq(roles_.calcium), "meq/L");
     draft.take("carbonate alkalinity", scaled(carbonate_alkalinity_eq(), milli), "meq/L");
     draft.take("temperature", in_celsius(solution_.temperature), "degC");
@@ -299,7 +300,7 @@ class IndexBook {
   }
   IndexLine p_alkalinity() const {
     return titrated({"p_alkalinity_mg_per_L_as_CaCO3",
-                     "p-alkalinity, titrated to pH 8.3 in the computer",
+                     "p-alkalinity, as if titrated to pH 8.3",
                      "mg/L as CaCO3",
                      "strong acid to pH 8.3 at 25 degC, closed",
                      "Standard Methods 2320 B"},
@@ -307,7 +308,7 @@ class IndexBook {
   }
   IndexLine m_alkalinity() const {
     return titrated({"m_alkalinity_mg_per_L_as_CaCO3",
-                     "m-alkalinity, titrated to pH 4.5 in the computer",
+                     "m-alkalinity, as if titrated to pH 4.5",
                      "mg/L as CaCO3",
                      "strong acid to pH 4.5 at 25 degC, closed",
                      "Standard Methods 2320 B"},
@@ -315,9 +316,9 @@ class IndexBook {
   }
   IndexLine buffer_intensity() const {
     IndexDraft draft({"buffer_intensity_meq_per_L",
-                      "Buffer intensity, closed to the air",
+                      "Buffer intensity",
                       "meq/L per pH unit",
-                      "strong base per unit of pH at the pH of the water",
+                      "strong base per unit of pH at the pH of the water, closed to the air",
                       "Van Slyke 1922, by equilibrium"});
     draft.take("pH", solution_.ph());
     return draft.value(
