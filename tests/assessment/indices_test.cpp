@@ -108,6 +108,16 @@ TEST_SUITE("assessment/indices") {
     example.pk2 = 10.329;
     example.pks = 8.480;
     CHECK(langelier_saturation_ph(example) == within(8.045, 0.005));
+    example.pk2 = 10.132;
+    example.pks = 9.021;
+    example.temperature = celsius(82);
+    CHECK(langelier_saturation_ph(example) == within(7.341, 0.005));
+    // Where pH equals pK2 of an ideal water, a third of the alkalinity is bicarbonate.
+    example.ionic_strength_mol_per_l = 0;
+    example.ph = 0;
+    const double acid = langelier_saturation_ph(example);
+    example.ph = example.pk2;
+    CHECK(langelier_saturation_ph(example) - acid == within(std::log10(3.0), 1e-9));
   }
 
   TEST_CASE("pfm has the slopes of Standard Methods 2330 B") {
