@@ -121,12 +121,14 @@ TEST_SUITE("assessment/indices") {
   }
 
   TEST_CASE("pfm has the slopes of Standard Methods 2330 B") {
-    for (const auto& [degc, a] : std::array<std::pair<double, double>, 4>{
-             {{5, .4944}, {25, .5108}, {50, .5365}, {80, .5758}}}) {
-      CAPTURE(degc);
+    struct Row {
+      double degc, a;
+    };
+    for (const Row& row : {Row{5, .4944}, Row{25, .5108}, Row{50, .5365}, Row{80, .5758}}) {
+      CAPTURE(row.degc);
       const double i = 0.01;
-      const double slope = langelier_pfm(i, celsius(degc)) / (0.1 / 1.1 - 0.3 * i);
-      CHECK(slope == within(a, 5e-5));
+      const double slope = langelier_pfm(i, celsius(row.degc)) / (0.1 / 1.1 - 0.3 * i);
+      CHECK(slope == within(row.a, 5e-5));
     }
   }
 
