@@ -32,6 +32,13 @@ inline constexpr std::size_t max_file_bytes = 4u << 20;
                                                        const std::string& name,
                                                        Diagnostics& diagnostics);
 
+/// The same, but returns what could be read beside the mistakes, so that the checks of the
+/// chemistry can add theirs and a file is refused once. Not fit for solving while `diagnostics` has
+/// errors.
+[[nodiscard]] std::optional<PlantFile> read_plant_draft(std::string_view text,
+                                                        const std::string& name,
+                                                        Diagnostics& diagnostics);
+
 /// A file of models/: its name and its text.
 struct ModelFile {
   std::string name;

@@ -47,11 +47,11 @@ std::optional<Inputs> load_inputs(const std::string& file,
   std::optional<Models> models = load_models(model_folder, diagnostics);
   const std::optional<std::string> text = read_text(file, diagnostics);
   if (!models || !text) return std::nullopt;
-  std::optional<PlantFile> plant = read_plant_file(*text, shown_name(file), diagnostics);
+  std::optional<PlantFile> plant = read_plant_draft(*text, shown_name(file), diagnostics);
   if (!plant) return std::nullopt;
   const ActivityModel* model = chosen_model(*plant, *models, diagnostics);
   std::optional<Stream> stream = make_stream(plant->analysis, models->chemistry, diagnostics);
-  if (model == nullptr || !stream) return std::nullopt;
+  if (model == nullptr || !stream || diagnostics.has_errors()) return std::nullopt;
   ActivityModel activity_model = *model;
   return Inputs{
       std::move(*models), std::move(*stream), std::move(activity_model), std::move(plant->train)};

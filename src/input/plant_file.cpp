@@ -306,16 +306,22 @@ class PlantReader {
 
 }  // namespace
 
-std::optional<PlantFile> read_plant_file(std::string_view text,
-                                         const std::string& name,
-                                         Diagnostics& diagnostics) {
+std::optional<PlantFile> read_plant_draft(std::string_view text,
+                                          const std::string& name,
+                                          Diagnostics& diagnostics) {
   const auto readable = readable_text(text, name, diagnostics);
   if (!readable) return std::nullopt;
   TomlFindings findings(name, diagnostics);
   const auto root = parse_toml(*readable, findings);
   if (!root) return std::nullopt;
-  PlantFile plant = PlantReader(*root, findings).read();
-  if (findings.any()) return std::nullopt;
+  return PlantReader(*root, findings).read();
+}
+
+std::optional<PlantFile> read_plant_file(std::string_view text,
+                                         const std::string& name,
+                                         Diagnostics& diagnostics) {
+  auto plant = read_plant_draft(text, name, diagnostics);
+  if (diagnostics.has_errors()) return std::nullopt;
   return plant;
 }
 
