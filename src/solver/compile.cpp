@@ -219,6 +219,10 @@ Kernel compile(const System& system, const Conditions& conditions) {
   kernel.solute_weight.resize(n_species, 0);
   kernel.activity_class.resize(n_species, 0);
   kernel.phase_solvent_exponent.resize(static_cast<std::size_t>(system.n_phases), 0);
+  for (int j = 0; j < system.n_species; ++j) {
+    kernel.all_solutes = kernel.all_solutes && kernel.solute_weight[j] == 1;
+    if (kernel.solvent_exponent[j] != 0) kernel.with_solvent.push_back(j);
+  }
   if (kernel.classes.empty()) kernel.classes.emplace_back();
   for (const double weight : kernel.ionic_weight) {
     kernel.largest_ionic_weight = std::max(kernel.largest_ionic_weight, weight);

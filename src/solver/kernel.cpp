@@ -74,35 +74,58 @@ void evaluate_amounts(const Kernel& kernel, Sums& sums) {
   }
 }
 
+namespace {
+
+/// What the solvent activity adds to the borders.
+void evaluate_solvent_borders(const Kernel& kernel, Sums& sums) {
+  for (int j = 0; j < kernel.n_species; ++j) {
+    const double c = kernel.solute_weight[j] * sums.amount[j];
+    sums.solute += c;
+    sums.solute_by_ionic -= c * sums.class_slope[kernel.activity_class[j]];
+    if (kernel.all_solutes) continue;
+    for (int e = kernel.begin[j]; e < kernel.begin[j + 1]; ++e) {
+      sums.borders[kernel.row[e]].gradient_solvent += kernel.nu[e] * c;
+    }
+  }
+  if (kernel.all_solutes) {
+    for (int i = 0; i < kernel.n_components; ++i) {
+      sums.borders[i].gradient_solvent = sums.sum[2 * i] - sums.sum[2 * i + 1];
+    }
+  }
+  for (const int j : kernel.with_solvent) {
+    const double by_solvent = kernel.solvent_exponent[j] * sums.amount[j];
+    sums.ionic_by_solvent += kernel.ionic_weight[j] * by_solvent;
+    sums.solute_by_solvent += kernel.solute_weight[j] * by_solvent;
+    for (int e = kernel.begin[j]; e < kernel.begin[j + 1]; ++e) {
+      sums.borders[kernel.row[e]].by_solvent += kernel.nu[e] * by_solvent;
+    }
+  }
+}
+
+}  // namespace
+
 void evaluate_borders(const Kernel& kernel, Sums& sums) {
+  // d c_j = c_j (nu_j dx - g'_j dI + w_j d ln a_w)
   std::fill(sums.borders.begin(), sums.borders.end(), Sums::Border{});
   sums.ionic = sums.ionic_by_ionic = sums.ionic_by_solvent = 0;
   sums.solute = sums.solute_by_ionic = sums.solute_by_solvent = 0;
   Sums::Border* const borders = sums.borders.data();
   const double* const nu = kernel.nu.data();
   const int* const row = kernel.row.data();
-  const int* const begin = kernel.begin.data();
+  int e = 0;
   for (int j = 0; j < kernel.n_species; ++j) {
-    // d c_j = c_j (nu_j dx - g'_j dI + w_j d ln a_w)
     const double c = sums.amount[j];
-    const Sums::Border part{kernel.ionic_weight[j] * c,
-                            -c * sums.class_slope[kernel.activity_class[j]],
-                            kernel.solute_weight[j] * c,
-                            kernel.solvent_exponent[j] * c};
-    sums.ionic += part.gradient_ionic;
-    sums.ionic_by_ionic += kernel.ionic_weight[j] * part.by_ionic;
-    sums.ionic_by_solvent += kernel.ionic_weight[j] * part.by_solvent;
-    sums.solute += part.gradient_solvent;
-    sums.solute_by_ionic += kernel.solute_weight[j] * part.by_ionic;
-    sums.solute_by_solvent += kernel.solute_weight[j] * part.by_solvent;
-    for (int e = begin[j]; e < begin[j + 1]; ++e) {
-      Sums::Border& border = borders[row[e]];
-      border.gradient_ionic += nu[e] * part.gradient_ionic;
-      border.by_ionic += nu[e] * part.by_ionic;
-      border.gradient_solvent += nu[e] * part.gradient_solvent;
-      border.by_solvent += nu[e] * part.by_solvent;
+    const double ionic = kernel.ionic_weight[j] * c;
+    const double by_ionic = -c * sums.class_slope[kernel.activity_class[j]];
+    sums.ionic += ionic;
+    sums.ionic_by_ionic += kernel.ionic_weight[j] * by_ionic;
+    const int end = kernel.begin[j + 1];
+    for (; e < end; ++e) {
+      borders[row[e]].gradient_ionic += nu[e] * ionic;
+      borders[row[e]].by_ionic += nu[e] * by_ionic;
     }
   }
+  if (kernel.solvent_slope != 0) evaluate_solvent_borders(kernel, sums);
 }
 
 bool factor_hessian(const Kernel& kernel, const Prepared& prepared, Sums& sums) {

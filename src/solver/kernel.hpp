@@ -28,6 +28,8 @@ struct Kernel {
   std::vector<ActivityClass> classes;
   std::vector<int> activity_class;
   double solvent_slope = 0;
+  bool all_solutes = true;        ///< Every solute weight is 1.
+  std::vector<int> with_solvent;  ///< Species with a solvent exponent, few.
   double largest_ionic_weight = 0;
 
   /// X_i^e for every exponent in use; whole exponents by a chain of products.
