@@ -270,7 +270,9 @@ bool run_fast_path(const Kernel& kernel,
     evaluate_amounts(kernel, sums);
     evaluate_borders(kernel, sums);
     if (!std::isfinite(sums.ionic)) return false;
-    if (couplings_hold(kernel, point, sums) && balances_hold(kernel, prepared, point, work)) {
+    // One step at least, even from a solution: it gives the slope of I(c(I)).
+    if (it > 0 && couplings_hold(kernel, point, sums) &&
+        balances_hold(kernel, prepared, point, work)) {
       return true;
     }
     ++work.iterations;

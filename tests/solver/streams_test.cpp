@@ -214,6 +214,7 @@ TEST_SUITE("solver/streams") {
       CHECK(used.x == fresh.x);
       CHECK(used.ln_amount == fresh.ln_amount);
       CHECK(used.ionic_strength == fresh.ionic_strength);
+      CHECK(used.certificate.ionic_strength_slope == fresh.certificate.ionic_strength_slope);
       CHECK(used.certificate.worst_balance_residual == fresh.certificate.worst_balance_residual);
     }
   }
