@@ -26,12 +26,13 @@ install_packages() {
     "${missing[@]}" >/dev/null
 }
 
-# build FOLDER OPTION...: configures FOLDER with the options and builds all of it.
+# build FOLDER OPTION...: configures FOLDER with the options and builds the array `targets`, or all of it.
+targets=(all)
 build() {
   local folder=$1
   shift
   mkdir -p "$folder"
   cmake -S . -B "$folder" "$@" >"$folder/configure.log" || { cat "$folder/configure.log" >&2; exit 1; }
-  cmake --build "$folder" --parallel "$(nproc)" >"$folder/build.log" 2>&1 ||
+  cmake --build "$folder" --target "${targets[@]}" --parallel "$(nproc)" >"$folder/build.log" 2>&1 ||
     { tail -50 "$folder/build.log" >&2; exit 1; }
 }
