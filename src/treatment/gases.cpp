@@ -38,15 +38,10 @@ std::vector<HeldPressure> pressures_of(const OpenTo& open, const Workbench& benc
   return held;
 }
 
-/// Takes `mol` of each gas, for every kg of feed, out of `amounts` and books it.
-void book_gas(const Gas& gas,
-              double mol,
-              const Water& water,
-              Workbench& bench,
-              Amounts& amounts,
-              StepRecord& record) {
+/// Books `mol` of a gas, for every kg of feed, that left the water (or, negative, entered it).
+void book_gas(
+    const Gas& gas, double mol, const Water& water, Workbench& bench, StepRecord& record) {
   if (mol == 0) return;
-  amounts.add(bench.dissolved(gas, mol), -1);
   auto& side = mol > 0 ? record.removed : record.added;
   side.push_back(
       bench.portion(gas.name, bench.dissolved(gas, std::abs(mol)), std::abs(mol), water));
@@ -94,19 +89,28 @@ Applied apply(const Strip& strip, const Water& water, Workbench& bench, StepReco
     const auto form = static_cast<std::size_t>(dissolved_form(gas, bench.chemistry()));
     const double mol =
         water.water_kg * water.solution.molality[form] * entry.value.quantity.value_in_si;
-    book_gas(gas, mol, water, bench, amounts, record);
+    amounts.add(bench.dissolved(gas, mol), -1);
+    book_gas(gas, mol, water, bench, record);
   }
   return bench.water(amounts, water.temperature, water.pressure);
 }
 
 Applied apply(const OpenTo& open, const Water& water, Workbench& bench, StepRecord& record) {
   const std::vector<HeldPressure> held = pressures_of(open, bench);
-  const std::vector<double> taken = taken_up(held, water, bench);
-  if (taken.empty() && !held.empty()) return std::nullopt;
+  std::vector<double> taken_mol(held.size(), 0.0);
   Amounts amounts = amounts_of(water);
+  for (int pass = 0; pass < phase_passes; ++pass) {
+    const Water now = Workbench::unsolved(amounts, water.temperature, water.pressure);
+    const std::vector<double> taken = taken_up(held, now, bench);
+    if (taken.size() != held.size()) return std::nullopt;
+    for (std::size_t k = 0; k < held.size(); ++k) {
+      const double mol = taken[k] * now.water_kg;
+      amounts.add(bench.dissolved(bench.chemistry().gases[held[k].gas], mol));
+      taken_mol[k] += mol;
+    }
+  }
   for (std::size_t k = 0; k < held.size(); ++k) {
-    const Gas& gas = bench.chemistry().gases[held[k].gas];
-    book_gas(gas, -taken[k] * water.water_kg, water, bench, amounts, record);
+    book_gas(bench.chemistry().gases[held[k].gas], -taken_mol[k], water, bench, record);
   }
   return bench.water(amounts, water.temperature, water.pressure);
 }
@@ -264,7 +268,8 @@ Applied apply(const Headspace& space, const Water& water, Workbench& bench, Step
   Amounts amounts = amounts_of(water);
   for (std::size_t k = 0; k < entered.size(); ++k) {
     const Gas& gas = bench.chemistry().gases[gas_space.gas(k)];
-    book_gas(gas, -entered[k] * water.water_kg, water, bench, amounts, record);
+    amounts.add(bench.dissolved(gas, entered[k] * water.water_kg));
+    book_gas(gas, -entered[k] * water.water_kg, water, bench, record);
   }
   return bench.water(amounts, water.temperature, water.pressure);
 }

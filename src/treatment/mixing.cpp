@@ -113,24 +113,27 @@ std::optional<double> kg_for_ph(const Reagent& reagent,
   };
   Ordinate low{0, before - target};
   if (std::abs(low.f) <= ph_tolerance) return 0;
+  double nearest = before;
   for (double kg = first_try_kg_per_kg * water.water_kg; kg <= last_try_kg_per_kg * water.water_kg;
        kg *= 2) {
     const Ordinate high{kg, miss(kg)};
     if (!solves) break;
     if (high.f * upwards >= 0) return root_between(low, high, ph_tolerance, miss);
-    if ((high.f - low.f) * upwards < -wrong_way_ph) {
+    const double ph = high.f + target;
+    if ((ph - before) * upwards < -wrong_way_ph) {
       return bench.fail(fmt::format("{} moves the pH from {:.2f} to {:.2f}, away from {:g}",
                                     reagent.name,
                                     before,
-                                    high.f + target,
+                                    ph,
                                     target));
     }
+    if ((ph - nearest) * upwards > 0) nearest = ph;
     low = high;
   }
   return bench.fail(fmt::format("{} brings the pH from {:.2f} no further than {:.2f}, not to {:g}",
                                 reagent.name,
                                 before,
-                                low.f + target,
+                                nearest,
                                 target));
 }
 

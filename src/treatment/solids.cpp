@@ -22,37 +22,39 @@ bool can_form(const Mineral& mineral, const std::vector<double>& totals) {
   return true;
 }
 
-/// The water with `solid_mol[k]` of the problem's minerals dissolved in it, mol per kg of water.
-std::vector<double> with_dissolved(std::vector<double> totals,
-                                   const std::vector<std::size_t>& minerals,
-                                   const std::vector<double>& solid_mol,
-                                   double sign,
-                                   const Chemistry& chemistry) {
-  for (std::size_t k = 0; k < minerals.size(); ++k) {
-    for (std::size_t i = 0; i < totals.size(); ++i) {
-      totals[i] += sign * solid_mol[k] * chemistry.minerals[minerals[k]].dissolution[i];
-    }
-  }
-  return totals;
+/// Adds what `mol` of a mineral dissolve to.
+void add_dissolved(const Mineral& mineral, double mol, std::vector<double>& totals) {
+  for (std::size_t i = 0; i < totals.size(); ++i) totals[i] += mol * mineral.dissolution[i];
 }
 
-/// Moves `change[k]` mol of mineral k, for every kg of feed, from the water into its solids.
-/// `dissolved` is what the solver left dissolved, per kg of the water before.
-void precipitate(Amounts& amounts,
+/// Lets the minerals of `problem` form or dissolve in `amounts`, whose solids they join.
+bool equilibrate(Problem& problem,
                  const std::vector<std::size_t>& minerals,
-                 const std::vector<double>& change,
-                 const std::vector<double>& dissolved,
+                 Amounts& amounts,
                  const Water& water,
-                 const Workbench& bench) {
+                 Workbench& bench) {
+  const Chemistry& chemistry = bench.chemistry();
+  const Water now = Workbench::unsolved(amounts, water.temperature, water.pressure);
+  problem.totals = now.totals;
+  for (const std::size_t m : minerals) {
+    add_dissolved(chemistry.minerals[m], now.solids[m], problem.totals);
+  }
+  const Solution solution = bench.solve(problem);
+  if (solution.status != SolveStatus::converged) {
+    static_cast<void>(bench.fail("no equilibrium with the solids: " + solution.reason));
+    return false;
+  }
   for (std::size_t k = 0; k < minerals.size(); ++k) {
-    amounts.add(bench.dissolved(bench.chemistry().minerals[minerals[k]], change[k]), -1);
-    amounts.solids[minerals[k]] += change[k];
+    const double mol = (solution.deposited[k] - now.solids[minerals[k]]) * now.water_kg;
+    amounts.add(bench.dissolved(chemistry.minerals[minerals[k]], mol), -1);
+    amounts.solids[minerals[k]] = solution.deposited[k] * now.water_kg;
   }
   for (std::size_t i = 1; i < amounts.basis.size(); ++i) {
-    if (std::abs(amounts.basis[i]) < depleted * water.totals[i] * water.water_kg) {
-      amounts.basis[i] = dissolved[i] * water.water_kg;
+    if (std::abs(amounts.basis[i]) < depleted * problem.totals[i] * now.water_kg) {
+      amounts.basis[i] = solution.totals[i] * now.water_kg;
     }
   }
+  return true;
 }
 
 Portion solid_portion(std::size_t mineral, double mol, const Water& water, Workbench& bench) {
@@ -75,29 +77,20 @@ void add_thickness(Portion& deposit, const Settle& settle, const Workbench& benc
 
 Applied apply(const Settle& settle, const Water& water, Workbench& bench, StepRecord& record) {
   const Chemistry& chemistry = bench.chemistry();
+  std::vector<std::size_t> minerals;
   Problem problem;
   problem.temperature = water.temperature;
-  std::vector<std::size_t> minerals;
-  std::vector<double> before;
   for (const Settle::Entry& entry : settle.minerals) {
     const auto m = static_cast<std::size_t>(chemistry.mineral_index(entry.mineral.text));
     if (!can_form(chemistry.minerals[m], water.totals) && water.solids[m] == 0) continue;
     minerals.push_back(m);
-    before.push_back(water.solids[m]);
     problem.minerals.push_back(
         {static_cast<int>(m), entry.index ? entry.index->quantity.number : 0});
   }
-  problem.totals = with_dissolved(water.totals, minerals, before, 1, chemistry);
-  const Solution solution = bench.solve(problem);
-  if (solution.status != SolveStatus::converged) {
-    return bench.fail("no equilibrium with the solids: " + solution.reason);
-  }
-  std::vector<double> change;
-  for (std::size_t k = 0; k < minerals.size(); ++k) {
-    change.push_back((solution.deposited[k] - before[k]) * water.water_kg);
-  }
   Amounts amounts = amounts_of(water);
-  precipitate(amounts, minerals, change, solution.totals, water, bench);
+  for (int pass = 0; pass < phase_passes; ++pass) {
+    if (!equilibrate(problem, minerals, amounts, water, bench)) return std::nullopt;
+  }
   record.solids_stay = settle.keep_solids;
   for (std::size_t m = 0; m < amounts.solids.size(); ++m) {
     const double formed = amounts.solids[m] - water.solids[m] * water.water_kg;
@@ -124,30 +117,45 @@ Applied apply(const RemoveSolids& remove,
   return after;
 }
 
+namespace {
+
+/// mol of the mineral that one kg of `water` dissolves to saturation; negative when it is past it.
 /// The bed is a solid that does not run out: more of it is offered until some is left.
-Applied apply(const PassBed& bed, const Water& water, Workbench& bench, StepRecord& record) {
-  const Chemistry& chemistry = bench.chemistry();
-  const auto m = static_cast<std::size_t>(chemistry.mineral_index(bed.mineral.text));
-  const std::vector<std::size_t> minerals = {m};
+std::optional<double> dissolved_by(const Water& water, std::size_t mineral, Workbench& bench) {
   Problem problem;
   problem.temperature = water.temperature;
-  problem.minerals.push_back({static_cast<int>(m), 0});
+  problem.minerals.push_back({static_cast<int>(mineral), 0});
   for (double offered = first_bed_molal; offered <= last_bed_molal; offered *= 10) {
-    problem.totals = with_dissolved(water.totals, minerals, {offered}, 1, chemistry);
+    problem.totals = water.totals;
+    add_dissolved(bench.chemistry().minerals[mineral], offered, problem.totals);
     const Solution solution = bench.solve(problem);
     if (solution.status != SolveStatus::converged) {
       return bench.fail("no equilibrium with the bed: " + solution.reason);
     }
-    if (solution.deposited[0] <= 0) continue;
-    const double dissolved = (offered - solution.deposited[0]) * water.water_kg;
-    if (dissolved <= 0) return water;
-    Amounts amounts = amounts_of(water);
-    const Amounts gained = bench.dissolved(chemistry.minerals[m], dissolved);
-    amounts.add(gained);
-    record.added.push_back(bench.portion(chemistry.minerals[m].name, gained, dissolved, water));
-    return bench.water(amounts, water.temperature, water.pressure);
+    if (solution.deposited[0] > 0) return offered - solution.deposited[0];
   }
   return bench.fail("the bed dissolves without reaching saturation");
+}
+
+}  // namespace
+
+Applied apply(const PassBed& bed, const Water& water, Workbench& bench, StepRecord& record) {
+  const Chemistry& chemistry = bench.chemistry();
+  const auto m = static_cast<std::size_t>(chemistry.mineral_index(bed.mineral.text));
+  Amounts amounts = amounts_of(water);
+  double sum = 0;
+  for (int pass = 0; pass < phase_passes; ++pass) {
+    const Water now = Workbench::unsolved(amounts, water.temperature, water.pressure);
+    const auto molality = dissolved_by(now, m, bench);
+    if (!molality) return std::nullopt;
+    if (pass == 0 && *molality <= 0) return water;
+    const double mol = *molality * now.water_kg;
+    amounts.add(bench.dissolved(chemistry.minerals[m], mol));
+    sum += mol;
+  }
+  record.added.push_back(bench.portion(
+      chemistry.minerals[m].name, bench.dissolved(chemistry.minerals[m], sum), sum, water));
+  return bench.water(amounts, water.temperature, water.pressure);
 }
 
 }  // namespace ionledger

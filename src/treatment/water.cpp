@@ -96,13 +96,18 @@ Amounts Workbench::none() const {
           std::vector<double>(plant_.chemistry.minerals.size(), 0.0)};
 }
 
+Water Workbench::unsolved(const Amounts& amounts, Temperature temperature, Pressure pressure) {
+  Water water{amounts.basis, amounts.solids, amounts.water_kg, temperature, pressure, {}};
+  for (double& total : water.totals) total /= water.water_kg;
+  for (double& solid : water.solids) solid /= water.water_kg;
+  return water;
+}
+
 std::optional<Water> Workbench::water(const Amounts& amounts,
                                       Temperature temperature,
                                       Pressure pressure) {
   if (!(amounts.water_kg > 0)) return fail("no water is left");
-  Water water{amounts.basis, amounts.solids, amounts.water_kg, temperature, pressure, {}};
-  for (double& total : water.totals) total /= water.water_kg;
-  for (double& solid : water.solids) solid /= water.water_kg;
+  Water water = unsolved(amounts, temperature, pressure);
   Problem problem;
   problem.temperature = temperature;
   problem.totals = water.totals;

@@ -12,6 +12,10 @@
 
 namespace ionledger {
 
+/// A phase takes water along or leaves some behind, which changes every molality by some 1e-5 of
+/// itself; after this many passes the rest is rounding.
+inline constexpr int phase_passes = 3;
+
 /// Molar mass of water, kg/mol, by the atomic weights of the chemistry.
 [[nodiscard]] double water_kg_per_mol();
 
@@ -24,6 +28,10 @@ class Workbench {
 
   [[nodiscard]] Solution solve(const Problem& problem);
 
+  /// The totals of `amounts` per kg of the water in it, not solved.
+  [[nodiscard]] static Water unsolved(const Amounts& amounts,
+                                      Temperature temperature,
+                                      Pressure pressure);
   /// The water that `amounts` make; nullopt, and why in failure(), when they make none.
   [[nodiscard]] std::optional<Water> water(const Amounts& amounts,
                                            Temperature temperature,

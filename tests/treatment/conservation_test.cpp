@@ -86,7 +86,8 @@ void check_conserved(const Water& before, const StepOutcome& step) {
   const double charge = net_charge(chemistry, out.basis);
   double gross = 0;
   for (std::size_t i = 0; i < out.basis.size(); ++i) {
-    gross += std::abs(chemistry.species[i].charge_number * out.basis[i]);
+    const int z = chemistry.species[i].charge_number;
+    gross += std::abs(z * out.basis[i]) + std::abs(z * in.basis[i]);
   }
   const double expected = net_charge(chemistry, in.basis) + net_charge(chemistry, net.basis);
   CHECK(std::abs(charge - expected) <= 1e-13 * gross);
