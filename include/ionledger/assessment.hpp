@@ -60,7 +60,7 @@ struct AssessedState {
   double temperature_degc = 25;
   double pressure_bar = 1.01325;
   double ph = std::numeric_limits<double>::quiet_NaN();
-  std::string ph_from;  ///< "charge balance" | "measured" | "alkalinity and inorganic carbon"
+  std::string ph_from;  ///< In words: "measured", "charge balance", ...
   std::optional<double> measured_ph, measured_ph_degc;
   double ionic_strength = 0;
   double water_activity = 1;

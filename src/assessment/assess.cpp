@@ -29,7 +29,7 @@ const char* words_of(ClosedStream::PHFrom from) {
     case ClosedStream::PHFrom::alkalinity_and_carbon:
       return "alkalinity and inorganic carbon";
     case ClosedStream::PHFrom::hydrogen_balance:
-      return "hydrogen balance";
+      return "the balance of hydrogen through the steps";
   }
   return "";
 }

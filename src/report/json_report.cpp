@@ -125,7 +125,10 @@ Json state_of(const AssessedState& state) {
   object["temperature_degC"] = state.temperature_degc;
   object["pressure_bar"] = state.pressure_bar;
   object["pH"] = state.ph;
-  object["pH_from"] = state.ph_from;
+  // The contract knows two words; the hydrogen total of a treated water is its charge balance
+  // carried on.
+  object["pH_from"] = state.ph_from == "measured" ? "measured" : "charge balance";
+  object["pH_follows_from"] = state.ph_from;
   object["measured_pH"] = optional_number(state.measured_ph);
   object["measured_pH_degC"] = optional_number(state.measured_ph_degc);
   object["ionic_strength_mol_per_kg"] = state.ionic_strength;
