@@ -192,18 +192,30 @@ std::string text_report(const Assessment& assessment, const TextStyle& style) {
   TextPage page(style);
   for (std::size_t i = 0; i < assessment.states.size(); ++i) {
     const AssessedState& state = assessment.states[i];
+    const bool is_last = i + 1 == assessment.states.size();
+    // A step says what it changes; the whole of it is one option away.
+    const bool in_full = i == 0 || style.all;
     if (i > 0) page.blank();
     print_title(page, assessment, state);
+    if (i == 0 && !is_last) print_train(page, assessment.states);
     print_step(page, state);
     print_essentials(page, state);
-    print_ledger(page, state);
+    if (in_full) print_ledger(page, state);
     print_minerals(page, state);
-    print_species(page, state);
-    print_gases(page, state);
-    print_indices(page, state);
-    print_totals(page, state);
-    print_cautions(page, state.cautions, true);
-    print_record(page, assessment, state.certificate);
+    if (in_full) {
+      print_species(page, state);
+      print_gases(page, state);
+      print_indices(page, state);
+      print_totals(page, state);
+    }
+    print_cautions(page, state.cautions, is_last);
+    if (is_last || style.all) print_record(page, assessment, state.certificate);
+  }
+  if (assessment.states.size() > 1 && !style.all) {
+    page.paragraph(
+        "Left out: ledger, species, gases and indices after each step. Add --all to see them.",
+        2,
+        Ink::quiet);
   }
   return std::move(page).text();
 }

@@ -28,6 +28,8 @@ inline constexpr double narrowest_near_saturation = 0.10;
 /// What the step that led to this state added, removed and deposited; nothing for a water as
 /// received.
 void print_step(TextPage& page, const AssessedState& state);
+/// One line a state: what a train does at a glance.
+void print_train(TextPage& page, const std::vector<AssessedState>& states);
 void print_ledger(TextPage& page, const AssessedState& state);
 void print_minerals(TextPage& page, const AssessedState& state);
 void print_species(TextPage& page, const AssessedState& state);

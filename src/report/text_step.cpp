@@ -1,4 +1,6 @@
 // What a treatment step moved, as a table.
+#include <algorithm>
+
 #include "report/number_text.hpp"
 #include "report/text_sections.hpp"
 #include "report/text_table.hpp"
@@ -29,6 +31,34 @@ void print_step(TextPage& page, const AssessedState& state) {
   add_rows("added", state.added, table);
   add_rows("removed", state.removed, table);
   add_rows(state.solids_stay ? "formed" : "deposited", state.deposited, table);
+  table.print(page);
+}
+
+void print_train(TextPage& page, const std::vector<AssessedState>& states) {
+  page.heading("Train", "the mineral with the highest index among common scales");
+  TextTable table({{"state"},
+                   {"°C", Align::right},
+                   {"pH", Align::right},
+                   {"ionic strength", Align::right},
+                   {"index", Align::right},
+                   {"of", Align::left, true},
+                   {"deposit, mg/L", Align::right}});
+  for (const AssessedState& state : states) {
+    const auto worst =
+        std::find_if(state.minerals.begin(), state.minerals.end(), [](const MineralLine& mineral) {
+          return mineral.is_common_scale;
+        });
+    const bool has_scale = worst != state.minerals.end();
+    double deposit = 0;
+    for (const Portion& portion : state.deposited) deposit += portion.mg_per_l;
+    table.row({{state.name},
+               {significant_text(state.temperature_degc, 3)},
+               {fixed_text(state.ph, 2)},
+               {significant_text(state.ionic_strength, 3)},
+               {has_scale ? signed_text(worst->saturation_index, 2) : ""},
+               {has_scale ? worst->mineral : ""},
+               {deposit > 0 ? significant_text(deposit, 3) : ""}});
+  }
   table.print(page);
 }
 
