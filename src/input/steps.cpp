@@ -99,7 +99,7 @@ class StepReader {
   }
 
   [[nodiscard]] std::vector<NamedGiven> named(TomlCursor& table,
-                                                 const QuantityExample& example) const {
+                                              const QuantityExample& example) const {
     std::vector<NamedGiven> result;
     for (const TomlCursor& entry : table.entries()) {
       result.push_back({{entry.key(), entry.key_span()}, given(entry, example)});
