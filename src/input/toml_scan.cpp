@@ -48,6 +48,8 @@ class Scanner {
   }
 
   /// Whether a quotation mark here opens anything: only behind what may precede a key or a value.
+  /// (The two marks of its own that a long text may end with stand behind a third, and open
+  /// nothing.)
   [[nodiscard]] bool may_open() const {
     constexpr std::string_view openers = " \t\n=.,[{";
     return at_ == 0 || openers.find(text_[at_ - 1]) != std::string_view::npos;
@@ -66,18 +68,12 @@ class Scanner {
       if (c == '\\' && mark == '"') {
         skip_escape(is_long);
       } else if (c == mark && (!is_long || is_triple(mark))) {
-        close(mark, is_long);
+        at_ += is_long ? 3 : 1;
         return;
       } else {
         ++at_;
       }
     }
-  }
-
-  /// Steps behind the closing mark; a long text may end with two marks of its own.
-  void close(char mark, bool is_long) {
-    at_ += is_long ? 3 : 1;
-    for (int i = 0; i < 2 && is_long && at_ < text_.size() && text_[at_] == mark; ++i) ++at_;
   }
 
   void skip_escape(bool is_long) {
@@ -97,7 +93,7 @@ class Scanner {
   void refuse_beyond_ascii() {
     const std::string_view sign = text_.substr(at_, code_point_at(text_, at_).length);
     error_ = {at_,
-              fmt::format("{} outside quotation marks",
+              fmt::format("{} stands outside quotation marks",
                           sign == no_break_space ? "a no-break space" : excerpt(sign)),
               "letters, digits, _ and - in a key; anything else in quotation marks",
               ""};
