@@ -110,6 +110,7 @@ struct Assessment {
   std::string activity_model;
   std::string activity_title;
   double max_ionic_strength = 0;
+  std::vector<std::string> sources;  ///< Citations of the constants used, in alphabetical order.
   std::vector<AssessedState> states;
 };
 

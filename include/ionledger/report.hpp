@@ -1,4 +1,4 @@
-// An assessment as text or JSON. Pure builders: they compute nothing and print nothing.
+// An assessment as text, JSON or a page. Pure builders: they compute nothing and print nothing.
 #pragma once
 
 #include <string>
@@ -25,6 +25,9 @@ struct TextStyle {
 [[nodiscard]] std::string json_report(const Assessment& assessment);
 /// The object "ionledger/balance/1", in the same manner.
 [[nodiscard]] std::string json_balance(const ReportBalance& balance, const std::string& title);
+
+/// One self-contained HTML file: no script, nothing fetched, for screen and paper.
+[[nodiscard]] std::string html_report(const Assessment& assessment);
 
 /// What is inside the models; `topic` empty for the overview, else a species, mineral, gas,
 /// constituent, activity model or source key. Empty result: nothing of that name.

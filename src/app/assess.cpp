@@ -38,6 +38,11 @@ int assess_command(const AssessOptions& options) {
   }
   Assessment assessment = assess(inputs->stream, *closed, chemistry, inputs->activity_model);
   assess_train(outcome, inputs->stream, plant, assessment);
+  if (!options.report.empty() &&
+      !write_page(options.report, html_report(assessment), diagnostics)) {
+    complain(diagnostics);
+    return wrong_input;
+  }
   if (options.json) return print(json_report(assessment));
   TextStyle style;
   style.colour = wants_colour();

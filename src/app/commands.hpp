@@ -9,6 +9,7 @@ namespace ionledger::app {
 struct AssessOptions {
   std::string file;
   std::string models;
+  std::string report;  ///< Where the page goes; empty: no page is written.
   bool json = false;
   bool all = false;
 };

@@ -8,6 +8,7 @@
 #include <filesystem>
 #include <memory>
 #include <system_error>
+#include <utility>
 
 namespace ionledger::app {
 namespace {
@@ -46,6 +47,16 @@ File open_to_read(const std::string& path, Diagnostics& diagnostics) {
         is_missing ? "check the path; \"ionledger new FILE\" writes one to start from" : "");
   }
   return file;
+}
+
+bool write_and_close(File file,
+                     const std::string& path,
+                     const std::string& text,
+                     Diagnostics& diagnostics) {
+  const bool is_written = std::fwrite(text.data(), 1, text.size(), file.get()) == text.size();
+  if (std::fclose(file.release()) == 0 && is_written) return true;
+  diagnostics.error({path}, "cannot be written", reason(errno));
+  return false;
 }
 
 }  // namespace
@@ -123,10 +134,24 @@ bool write_new_file(const std::string& path, const std::string& text, Diagnostic
                       exists ? "choose another name" : "");
     return false;
   }
-  const bool is_written = std::fwrite(text.data(), 1, text.size(), file.get()) == text.size();
-  if (std::fclose(file.release()) == 0 && is_written) return true;
-  diagnostics.error({path}, "cannot be written", reason(errno));
-  return false;
+  return write_and_close(std::move(file), path, text, diagnostics);
+}
+
+bool write_page(const std::string& path, const std::string& text, Diagnostics& diagnostics) {
+  if (fs::path(path).extension() != ".html") {
+    diagnostics.error({path},
+                      "a report is written as a page only",
+                      "\"" + path + "\" for --report",
+                      "a name that ends in .html",
+                      "add .html to the name");
+    return false;
+  }
+  File file(std::fopen(path.c_str(), "wb"));
+  if (file == nullptr) {
+    diagnostics.error({path}, "cannot be created", reason(errno));
+    return false;
+  }
+  return write_and_close(std::move(file), path, text, diagnostics);
 }
 
 }  // namespace ionledger::app

@@ -32,4 +32,11 @@ inline constexpr const char* standard_input_name = "<standard input>";
                                   const std::string& text,
                                   Diagnostics& diagnostics);
 
+/// Writes `text` to a page, in place of an older one. Only names that end in ".html" are written,
+/// so that a slip cannot replace a plant file. False, with an error, when it is not or writing
+/// fails.
+[[nodiscard]] bool write_page(const std::string& path,
+                              const std::string& text,
+                              Diagnostics& diagnostics);
+
 }  // namespace ionledger::app

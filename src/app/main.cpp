@@ -32,6 +32,8 @@ void add_commands(CLI::App& program, Request& request) {
   assess->add_option("FILE", request.assess.file, file_help)->required()->type_name("");
   assess->add_flag("--json", request.assess.json, "Print JSON for a program to read");
   assess->add_flag("--all", request.assess.all, "Show every species, mineral and gas");
+  assess->add_option("--report", request.assess.report, "Write a page (.html) to read and print")
+      ->type_name("FILE");
   assess->add_option("--models", request.assess.models, models_help)->type_name("DIR");
   assess->group("Commands")->callback([&] {
     request.run = [&] { return assess_command(request.assess); };

@@ -3,6 +3,7 @@
 #include <cassert>
 #include <cmath>
 #include <numbers>
+#include <set>
 
 #include "assessment/assessed_state.hpp"
 #include "assessment/cautions.hpp"
@@ -270,6 +271,24 @@ class StateBuilder {
   AssessedState state_;
 };
 
+/// Citations of the constants of every species and mineral that can exist in the stream.
+std::vector<std::string> sources_of(const Chemistry& chemistry, const ClosedStream& closed) {
+  std::set<std::string> keys;
+  const auto n_basis = static_cast<std::size_t>(chemistry.n_basis);
+  for (std::size_t s = n_basis; s < chemistry.species.size(); ++s) {
+    if (closed.solution.molality[s] > 0) keys.insert(chemistry.species[s].constant.source);
+  }
+  for (const Mineral& mineral : chemistry.minerals) {
+    if (has_constituents(mineral.dissolution, closed.totals)) keys.insert(mineral.constant.source);
+  }
+  std::set<std::string> citations;
+  for (const std::string& key : keys) {
+    const auto found = chemistry.sources.find(key);
+    if (found != chemistry.sources.end()) citations.insert(found->second);
+  }
+  return {citations.begin(), citations.end()};
+}
+
 }  // namespace
 
 AssessedState assessed_state(const Stream& stream,
@@ -291,6 +310,7 @@ Assessment assess(const Stream& stream,
   result.activity_model = model.name;
   result.activity_title = model.title;
   result.max_ionic_strength = model.max_ionic_strength_molal;
+  result.sources = sources_of(chemistry, closed);
   result.states.push_back(assessed_state(stream, closed, chemistry, model));
   return result;
 }

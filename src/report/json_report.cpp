@@ -174,7 +174,8 @@ std::string json_report(const Assessment& assessment) {
                    {"activity", assessment.activity_model},
                    {"digest", assessment.digest},
                    {"activity_title", assessment.activity_title},
-                   {"max_ionic_strength_mol_per_kg", assessment.max_ionic_strength}}},
+                   {"max_ionic_strength_mol_per_kg", assessment.max_ionic_strength},
+                   {"sources", assessment.sources}}},
                  {"states", array_of(assessment.states, state_of)}});
 }
 

@@ -90,6 +90,12 @@ TextTable mineral_table() {
                     {""}});
 }
 
+void print_left_out(TextPage& page, std::size_t count, const std::string& what) {
+  if (count > 0) page.paragraph(what + " Add --all to see everything.", 2, Ink::quiet);
+}
+
+}  // namespace
+
 std::vector<MineralLine> minerals_shown(const AssessedState& state, bool common, bool all) {
   std::vector<MineralLine> shown;
   for (const MineralLine& mineral : state.minerals) {
@@ -102,11 +108,23 @@ std::vector<MineralLine> minerals_shown(const AssessedState& state, bool common,
   return shown;
 }
 
-void print_left_out(TextPage& page, std::size_t count, const std::string& what) {
-  if (count > 0) page.paragraph(what + " Add --all to see everything.", 2, Ink::quiet);
+std::vector<SpeciesLine> species_shown(const AssessedState& state, bool all) {
+  double most = 0;
+  for (const SpeciesLine& line : state.species) most = std::max(most, line.molality);
+  std::vector<SpeciesLine> shown;
+  for (const SpeciesLine& line : state.species) {
+    if (all || line.molality >= smallest_share * most) shown.push_back(line);
+  }
+  return shown;
 }
 
-}  // namespace
+std::vector<GasLine> gases_shown(const AssessedState& state, bool all) {
+  std::vector<GasLine> shown;
+  for (const GasLine& gas : state.gases) {
+    if (all || gas.partial_pressure_bar >= lowest_pressure_bar) shown.push_back(gas);
+  }
+  return shown;
+}
 
 Saturation saturation_of(const MineralLine& mineral) {
   const double index = mineral.saturation_index;
@@ -144,19 +162,13 @@ void print_minerals(TextPage& page, const AssessedState& state) {
 void print_species(TextPage& page, const AssessedState& state) {
   if (state.species.empty()) return;
   page.heading("Species", "molality and activity in mol/kg of water; γ has no unit");
-  double most = 0;
-  for (const SpeciesLine& line : state.species) most = std::max(most, line.molality);
+  const auto shown = species_shown(state, page.shows_all());
   TextTable table({{"species", Align::left, true},
                    {"charge", Align::right},
                    {"molality", Align::right},
                    {"γ", Align::right},
                    {"activity", Align::right}});
-  std::size_t left_out = 0;
-  for (const SpeciesLine& line : state.species) {
-    if (!page.shows_all() && line.molality < smallest_share * most) {
-      ++left_out;
-      continue;
-    }
+  for (const SpeciesLine& line : shown) {
     table.row({{line.species},
                {line.charge == 0 ? "0" : signed_text(line.charge, 0)},
                {scientific_text(line.molality)},
@@ -164,6 +176,7 @@ void print_species(TextPage& page, const AssessedState& state) {
                {scientific_text(line.activity)}});
   }
   table.print(page);
+  const std::size_t left_out = state.species.size() - shown.size();
   print_left_out(page,
                  left_out,
                  "Left out: " + counted(left_out, "species", "species") +
@@ -173,16 +186,12 @@ void print_species(TextPage& page, const AssessedState& state) {
 void print_gases(TextPage& page, const AssessedState& state) {
   if (state.gases.empty()) return;
   TextTable table({{"gas", Align::left, true}, {"formula"}, {"bar", Align::right}});
-  std::size_t left_out = 0;
-  for (const GasLine& gas : state.gases) {
-    if (!page.shows_all() && !(gas.partial_pressure_bar >= lowest_pressure_bar)) {
-      ++left_out;
-      continue;
-    }
+  for (const GasLine& gas : gases_shown(state, page.shows_all())) {
     table.row({{gas.gas}, {gas.formula}, {scientific_text(gas.partial_pressure_bar)}});
   }
   page.heading("Gases", "partial pressure in balance with the water");
   table.print(page);
+  const std::size_t left_out = state.gases.size() - gases_shown(state, page.shows_all()).size();
   print_left_out(
       page, left_out, "Left out: " + counted(left_out, "gas", "gases") + " below 10⁻⁷ bar.");
 }

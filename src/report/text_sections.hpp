@@ -3,6 +3,7 @@
 #pragma once
 
 #include <string>
+#include <vector>
 
 #include "ionledger/assessment.hpp"
 #include "report/text_page.hpp"
@@ -24,6 +25,14 @@ inline constexpr double narrowest_near_saturation = 0.10;
 
 /// True when hydrogen took up the whole imbalance, so that the balance cannot test the analysis.
 [[nodiscard]] bool balance_was_spent_on_ph(const AssessedState& state);
+
+/// What matters, unless everything is asked for: minerals near saturation or past it, species above
+/// a thousandth of the most abundant, gases that can be noticed. In the order of the state.
+[[nodiscard]] std::vector<MineralLine> minerals_shown(const AssessedState& state,
+                                                      bool common,
+                                                      bool all);
+[[nodiscard]] std::vector<SpeciesLine> species_shown(const AssessedState& state, bool all);
+[[nodiscard]] std::vector<GasLine> gases_shown(const AssessedState& state, bool all);
 
 /// What the step that led to this state added, removed and deposited; nothing for a water as
 /// received.
