@@ -1,6 +1,7 @@
 // Escaping, and the balance of elements.
 #include "report/html_writer.hpp"
 
+#include <algorithm>
 #include <array>
 #include <cctype>
 
@@ -81,17 +82,32 @@ std::string typeset_formula(std::string_view name) {
                           name.find_first_not_of("0123456789", sign + 1) == std::string_view::npos;
   const std::string_view body = has_charge ? name.substr(0, sign) : name;
   std::string result;
-  for (std::size_t i = 0; i < body.size(); ++i) {
-    const bool counts_atoms = is_digit(body[i]) && i > 0 && body[i - 1] != ' ';
-    if (counts_atoms) {
-      result += below[std::size_t(body[i] - '0')];
-    } else {
-      result += body[i];
+  bool counts_atoms = false;  // "H2" does, the first number of "2 H2O" and of "13 traces" does not
+  for (const char c : body) {
+    if (is_digit(c) && counts_atoms) {
+      result += below[std::size_t(c - '0')];
+      continue;
     }
+    counts_atoms = std::isalpha(static_cast<unsigned char>(c)) != 0 || c == ')';
+    result += c;
   }
   if (!has_charge) return result;
   for (const char digit : name.substr(sign + 1)) result += above[std::size_t(digit - '0')];
   return result + (name[sign] == '+' ? "⁺" : "⁻");
+}
+
+std::string typeset_words(std::string_view text) {
+  std::string result;
+  while (!text.empty()) {
+    const std::size_t end = std::min(text.find(' '), text.size());
+    const std::string_view word = text.substr(0, end);
+    const bool is_formula = !word.empty() && word[0] >= 'A' && word[0] <= 'Z' &&
+                            word.find_first_of("0123456789") != std::string_view::npos;
+    result += is_formula ? typeset_formula(word) : std::string(word);
+    if (end < text.size()) result += ' ';
+    text.remove_prefix(std::min(end + 1, text.size()));
+  }
+  return result;
 }
 
 }  // namespace ionledger

@@ -51,4 +51,7 @@ class Element {
 /// In Unicode, so that it serves tables, pictures and their descriptions alike.
 [[nodiscard]] std::string typeset_formula(std::string_view name);
 
+/// The same for every formula among words: "105 mg/L as CaCO3".
+[[nodiscard]] std::string typeset_words(std::string_view text);
+
 }  // namespace ionledger

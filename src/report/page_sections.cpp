@@ -2,8 +2,6 @@
 // charge balance.
 #include "report/page_sections.hpp"
 
-#include <cmath>
-
 #include "report/account.hpp"
 #include "report/number_text.hpp"
 #include "report/plot.hpp"
@@ -33,7 +31,10 @@ void write_fact(HtmlWriter& html,
 void write_facts(HtmlWriter& html, const AssessedState& state) {
   const Element facts(html, "dl", {{"class", "facts"}});
   write_fact(html, "Temperature", plain_text(state.temperature_degc), "°C");
-  write_fact(html, "pH, from " + state.ph_from, fixed_text(state.ph, 2), "");
+  write_fact(html,
+             state.ph_from == "measured" ? "pH, measured" : "pH, from " + state.ph_from,
+             fixed_text(state.ph, 2),
+             "");
   write_fact(html, "Ionic strength", significant_text(state.ionic_strength), "mol/kg");
   write_fact(html, "Alkalinity", significant_text(state.alkalinity_eq_per_kg * 1e3), "meq/kg");
   write_fact(html, "Dissolved solids", significant_text(state.tds_mg_per_l, 4), "mg/L");

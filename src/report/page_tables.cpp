@@ -1,8 +1,4 @@
 // The sections of evidence: species, properties and indices, and the record.
-#include <fmt/format.h>
-
-#include <cmath>
-
 #include "report/essentials.hpp"
 #include "report/number_text.hpp"
 #include "report/page_sections.hpp"
@@ -26,7 +22,7 @@ void write_gases(HtmlWriter& html, const AssessedState& state) {
 /// A value of an index and the unit that goes with it.
 std::string index_text(const IndexLine& line) {
   return line.unit.empty() ? fixed_text(*line.value, 2)
-                           : significant_text(*line.value) + " " + line.unit;
+                           : significant_text(*line.value) + " " + typeset_words(line.unit);
 }
 
 void write_indices(HtmlWriter& html, const AssessedState& state) {
@@ -176,7 +172,7 @@ void write_properties(HtmlWriter& html, int number, const Assessment& assessment
                             " mol/kg to which the activity model is trusted by its authors.");
   std::vector<std::vector<std::string>> rows;
   for (const Essential& essential : essentials_of(state)) {
-    rows.push_back({essential.name, essential.value});
+    rows.push_back({essential.name, typeset_words(essential.value)});
   }
   write_table(html, "", {{"Property", "", true}, {"Value", "with unit", true}}, rows);
   write_indices(html, state);

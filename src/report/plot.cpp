@@ -32,8 +32,15 @@ PlotAxis axis_around(double low, double high) {
     low -= 0.5;
     high += 0.5;
   }
-  const double step = tick_step(high - low);
-  return {step * std::floor(low / step + 1e-9), step * std::ceil(high / step - 1e-9)};
+  double step = tick_step(high - low);
+  while (true) {
+    const PlotAxis axis = {step * std::floor(low / step + 1e-9),
+                           step * std::ceil(high / step - 1e-9)};
+    // Rounded outwards, the axis may ask for wider steps than the values did.
+    const double wider = tick_step(axis.high - axis.low);
+    if (wider <= step * (1 + 1e-9)) return axis;
+    step = wider;
+  }
 }
 
 PlotTicks ticks_of(const PlotAxis& axis) {
