@@ -4,6 +4,7 @@
 #include <cmath>
 #include <cstddef>
 
+#include "report/account.hpp"
 #include "report/number_text.hpp"
 #include "report/terminal_text.hpp"
 #include "report/text_sections.hpp"
