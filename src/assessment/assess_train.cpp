@@ -22,6 +22,7 @@ class TrainAssessor {
     for (std::size_t i = 0; i < water.totals.size(); ++i) {
       if (water.totals[i] > 0) stream.reported[i] = true;
     }
+    stream.inorganic_carbon_is_known = true;
     // Milligrams per litre are those a laboratory would report, at its own temperature.
     stream.litre_per_kg_water = solution_volume_l(plant_.chemistry,
                                                   water.solution.molality,

@@ -68,7 +68,7 @@ class TrainChecker {
              std::string fix = {}) {
     diagnostics_.error(where,
                        std::move(summary),
-                       fmt::format("\"{}\" in step {}", found, train_[at_].name),
+                       fmt::format("\"{}\" in step \"{}\"", found, train_[at_].name),
                        std::move(expected),
                        std::move(fix));
     ok_ = false;
@@ -118,12 +118,12 @@ class TrainChecker {
     }
   }
 
-  void need_flow(const Given& given) {
+  void need_flow(const Given& given, const std::string& instead) {
     if (has_flow_) return;
     error(given.span,
-          "an amount per time needs the flow of the stream",
+          fmt::format("\"{}\" says nothing without the flow of the stream", given.text),
           given.text,
-          "an amount per volume, or stream.flow",
+          instead.empty() ? "stream.flow" : instead + ", or stream.flow",
           "add flow = \"42 m3/h\" to [stream]");
   }
 
@@ -136,7 +136,7 @@ class TrainChecker {
     }
     if (blend.share) check_share(*blend.share, false);
     if (blend.flow && is_one_of<VolumeFlow>(*blend.flow, "a volume flow such as \"12 m3/h\"")) {
-      need_flow(*blend.flow);
+      need_flow(*blend.flow, "a share of the mixture");
     }
   }
 
@@ -167,7 +167,7 @@ class TrainChecker {
     }
     if (!fits || reagent == nullptr) return;
     if (is_volume_flow || std::holds_alternative<MassFlow>(to<MassFlow>(written))) {
-      need_flow(amount);
+      need_flow(amount, "an amount per volume");
     }
     if ((is_volume || is_volume_flow) && !reagent->density_kg_per_l) {
       error(amount.span,
@@ -333,7 +333,7 @@ class TrainChecker {
     if (settle.area->quantity.dimension != area || !(settle.area->quantity.value_in_si > 0)) {
       error(settle.area->span, "this is no area", settle.area->text, "such as \"120 m2\"");
     } else {
-      need_flow(*settle.area);
+      need_flow(*settle.area, "");
     }
   }
 
@@ -352,7 +352,11 @@ class TrainChecker {
     std::vector<std::string> earlier;
     for (std::size_t k = 0; k < at_; ++k) earlier.push_back(train_[k].name);
     if (std::find(earlier.begin(), earlier.end(), recycle.to.text) != earlier.end()) return;
-    unknown("earlier step", recycle.to, earlier);
+    if (!earlier.empty()) return unknown("earlier step", recycle.to, earlier);
+    error(recycle.to.span,
+          "there is no earlier step to return to",
+          recycle.to.text,
+          "the name of a step before this one");
   }
 
   const Train& train_;
