@@ -41,7 +41,7 @@ settle = ["calcite"]
     for (std::size_t k = 0; k < 5; ++k) CHECK(assessment.states[k].name == names[k]);
     CHECK(assessment.states[0].added.front().kg_per_h.value() == rel(1.0, 1e-9));
     CHECK(assessment.states[0].flow_m3_per_h.value() == rel(50, 1e-4));
-    CHECK(assessment.states[0].ph_from == "hydrogen balance");
+    CHECK(assessment.states[0].ph_from == "the balance of hydrogen through the steps");
     CHECK(assessment.states[0].cautions.front().about == "sulfuric acid 96 %");
     CHECK(assessment.states[1].water_kg_per_kg_feed == rel(0.5, 1e-4));
     const AssessedState& scale = assessment.states[4];
