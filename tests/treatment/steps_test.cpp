@@ -206,6 +206,8 @@ open_to = "air"
     const TrainRun run = run_text(river + step("strip = { carbon_dioxide = \"80 %\" }"));
     CHECK(run.step("step_1").record.removed[0].mol ==
           rel(0.8 * molality(run.feed.solution, "CO2"), 1e-12));
+    CHECK(run.step("step_1").record.removed[0].kg ==
+          rel(run.step("step_1").record.removed[0].mol * 0.044009, 1e-4));
     CHECK(alkalinity_of(run.last()) == rel(alkalinity_of(run.feed), 1e-12));
     CHECK(run.last().solution.ph() > run.feed.solution.ph() + 0.3);
   }
