@@ -61,7 +61,9 @@ ordered_json answer(const HardSystem& hard, const solver::Outcome& outcome) {
     result["phases_mol"][hard.phases[m]] =
         solved ? number_or_null(outcome.phase_amount[m]) : ordered_json(nullptr);
   }
-  result["ionic_strength"] = number_or_null(outcome.ionic_strength);
+  // Without charges in the file there is none to report.
+  result["ionic_strength"] =
+      hard.species_charge.empty() ? ordered_json(nullptr) : number_or_null(outcome.ionic_strength);
   const solver::Certificate& c = outcome.certificate;
   ordered_json& certificate = result["certificate"];
   certificate["status"] = name_of(outcome.status);
