@@ -2,10 +2,10 @@
 // pairs and activity coefficients together.
 //
 // Sources  R. G. Bates, J. Res. NBS 66A (1962) 179; B. R. Staples and R. G. Bates, J. Res. NBS 73A
-//          (1969) 37 (carbonate); R. G. Bates, V. E. Bower and E. R. Smith, J. Res. NBS 56 (1956)
-//          305 (calcium hydroxide). The three-decimal values away from 25 degC are from memory,
-//          checked to two decimals against JIS Z 8802 (all but phosphate 1:3.5 and calcium
-//          hydroxide).
+//          (1969) 37 (carbonate, citrate); R. G. Bates, V. E. Bower and E. R. Smith, J. Res. NBS 56
+//          (1956) 305 (calcium hydroxide). The three-decimal values away from 25 degC are from
+//          memory, checked to two decimals against JIS Z 8802 (all but phosphate 1:3.5, citrate and
+//          calcium hydroxide).
 // Tolerance 0.02 at 25 degC and 0.03 elsewhere: the Bates-Guggenheim convention behind the
 // standards
 //          assigns 0.01, the difference of activity models 0.01 (see models/activity.toml).
@@ -53,6 +53,24 @@ const std::vector<Standard>& standards() {
         {30, 9.966},
         {40, 9.889},
         {50, 9.828}}},
+      {"potassium tetroxalate, 0.05 mol/kg",
+       {{"K+", 0.05}, {"C2O4-2", 0.1}},
+       {{0, 1.666},
+        {10, 1.670},
+        {20, 1.675},
+        {25, 1.679},
+        {30, 1.683},
+        {40, 1.694},
+        {50, 1.707},
+        {60, 1.723}}},
+      {"potassium dihydrogen citrate, 0.05 mol/kg",
+       {{"K+", 0.05}, {"C6H5O7-3", 0.05}},
+       {{0, 3.863}, {10, 3.820}, {20, 3.788}, {25, 3.776}, {30, 3.766}, {40, 3.753}, {50, 3.749}}},
+      // The equation of H. B. Hetzer, R. A. Durst, R. A. Robinson and R. G. Bates, J. Res. NBS 81A
+      // (1977) 21, which replaced the table of 1962.
+      {"potassium hydrogen phthalate, 0.05 mol/kg",
+       {{"K+", 0.05}, {"C8H4O4-2", 0.05}},
+       {{0, 4.010}, {10, 4.000}, {25, 4.006}, {40, 4.031}, {60, 4.087}}},
       {"calcium hydroxide, 0.0203 mol/kg",
        {{"Ca+2", 0.0203}},
        {{0, 13.423},
