@@ -15,6 +15,7 @@ namespace {
 
 constexpr int max_root_steps = 100;
 constexpr double root_tolerance = 1e-14;  // relative to the scale of the residual
+constexpr double rounding = 1e-13;        // of the gross charge: no one has to close this
 constexpr double worth_a_caution = 0.02;  // relative difference of two alkalinities
 constexpr double test_share =
     0.01;  // of the ion sum, to show what an error of the analysis does to pH
@@ -148,6 +149,15 @@ class StreamCloser {
     return !contradiction_;
   }
 
+  /// Sum of |z| T over what was reported: what a charge is small against.
+  [[nodiscard]] double gross_charge() const {
+    double gross = 0;
+    for (std::size_t i = 1; i < totals_.size(); ++i) {
+      gross += std::abs(chemistry_.species[i].charge_number) * totals_[i];
+    }
+    return gross;
+  }
+
   [[nodiscard]] std::string closing_name() const {
     if (stream_.closing_component < 0) return "";
     const std::string& species =
@@ -182,8 +192,8 @@ class StreamCloser {
     if (slope == 0) return refuse_closure(std::numeric_limits<double>::quiet_NaN());
     const double change = -result_.imbalance_eq_per_kg / slope;
     const double closed = totals_[component] + change;
-    if (closed < 0) return refuse_closure(closed);
-    totals_[component] = closed;
+    if (closed < -rounding * gross_charge()) return refuse_closure(closed);
+    totals_[component] = std::max(closed, 0.0);
     totals_[0] += chemistry_.reference_protons[component] * change;
     book_closure(change);
     return true;
@@ -312,8 +322,8 @@ class StreamCloser {
     const auto component = static_cast<std::size_t>(stream_.closing_component);
     const double sign = chemistry_.species[component].charge_number > 0 ? 1 : -1;
     const double before = totals_[component];
-    const double scale = std::abs(before) + std::abs(result_.imbalance_eq_per_kg);
-    if (scale == 0) return true;
+    const double scale = gross_charge();
+    if (std::abs(result_.imbalance_eq_per_kg) <= rounding * scale) return true;
     const double root = increasing_root(
         [&](double total) {
           totals_[component] = total;
@@ -353,10 +363,7 @@ class StreamCloser {
 
   /// A pH from charge balance carries every error of the analysis; show how much one per cent is.
   void tell_what_an_error_does(const EquilibriumSystem& system, const Problem& problem) {
-    double gross = 0;
-    for (std::size_t i = 1; i < totals_.size(); ++i) {
-      gross += std::abs(chemistry_.species[i].charge_number) * totals_[i];
-    }
+    const double gross = gross_charge();
     double shift = 0;
     for (const double sign : {-1.0, 1.0}) {
       Problem shifted = problem;
