@@ -25,7 +25,7 @@ h1{font-size:var(--title);line-height:1.15;letter-spacing:-.015em;margin:0;overf
 .facts dt{font-size:var(--small);color:var(--lead)}
 .facts dd{margin:0;font-size:var(--fact);line-height:1.25;white-space:nowrap}
 .facts small{font-size:var(--small);color:var(--graphite)}
-section{margin-top:var(--gap)}
+section{margin-top:var(--gap);display:flow-root}
 h2{font-size:var(--h2);line-height:1.25;margin:0}
 h2 .no{font-weight:400;color:var(--lead);margin-right:.6em}
 h3{font-size:var(--body);margin:26px 0 6px}

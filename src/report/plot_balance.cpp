@@ -106,8 +106,8 @@ void draw_gap(HtmlWriter& html, const AssessedState& state) {
     plot_line(html, "limit", {axis.percent(edge), 0, axis.percent(edge), 100});
   }
   plot_mark(html, is_good ? "good" : "bad", axis.percent(gap), 50, "M-6 0L0-9L6 0L0 9Z");
-  // The label stays on the side that has room.
-  const bool is_right = gap > 0;
+  // Outwards, clear of the line at zero; inwards where the picture ends.
+  const bool is_right = (gap > 0) == (std::abs(gap) > axis.high / 2);
   plot_text(html,
             is_right ? "strong end" : "strong",
             {axis.percent(gap), 50, is_right ? -12.0 : 12.0},

@@ -112,7 +112,7 @@ void row(
                 {"width", in_percent(std::abs(end - zero))},
                 {"y", in_percent(y - 0.2 * tall)},
                 {"height", in_percent(0.4 * tall)}});
-    whisker(html, mineral, axis, y);
+    if (axis.holds(mineral.saturation_index)) whisker(html, mineral, axis, y);
     marker(html, look.style, axis, mineral.saturation_index, y);
   }
   plot_text(html, "name", {0, y}, mineral.mineral);
