@@ -49,7 +49,7 @@ h3{font-size:var(--body);margin:26px 0 6px}
 .segment{stroke:#fff;stroke-width:2.5}.cation{fill:var(--sluice-t)}.anion{fill:var(--sloe-t)}
 .hatch{fill:url(#hatching);opacity:.3}.hatchline{stroke:var(--sloe);stroke-width:1.5}
 .gap{fill:var(--furnace)}
-.gapscale{height:44px;margin:10px 24px 48px;width:calc(100% - 48px)}
+.gapscale{height:44px;margin:10px 0 48px}
 .accepted{fill:var(--straw-t)}.limit{stroke:var(--ink);stroke-width:1.6}
 .good{fill:var(--plumbline)}.bad{fill:var(--furnace)}
 .minerals{height:calc(var(--rows)*var(--row));margin:0 222px 54px 156px;width:calc(100% - 378px)}
@@ -135,14 +135,12 @@ tbody:last-child tr:last-child{border-bottom:1.5px solid var(--ink)}
   thead{display:table-header-group}
   .find{margin-bottom:9pt}
   h3{margin-top:14pt}
-  .balance{height:112pt}.gapscale{height:24pt;margin:5pt 18pt 0;width:calc(100% - 36pt)}
-  /* Padding, where the screen has margins: what hangs below a picture must stay on its sheet. */
-  .plot{box-sizing:content-box}.gapscale,.minerals,.steps{padding-bottom:34pt}
-  .minerals{margin:0 158pt 0 100pt;width:calc(100% - 258pt)}
+  .balance{height:112pt}.gapscale{height:24pt;margin:5pt 0 30pt}
+  .minerals{margin:0 158pt 34pt 100pt;width:calc(100% - 258pt)}
   .minerals .name{transform:translateX(-100pt)}.minerals .value{transform:translateX(76pt)}.minerals .state{transform:translateX(84pt)}
   .state .two{display:block}
-  .state .two .minerals{margin:0 158pt 0 100pt;width:calc(100% - 258pt)}
-  .steps{height:170pt;margin:26pt 96pt 0 32pt;width:calc(100% - 128pt)}.steps.low{height:80pt}
+  .state .two .minerals{margin:0 158pt 34pt 100pt;width:calc(100% - 258pt)}
+  .steps{height:170pt;margin:26pt 96pt 36pt 32pt;width:calc(100% - 128pt)}.steps.low{height:80pt}
   .steps .yname{transform:translateX(-32pt)}
   .scroll{overflow:visible}
   th,td{padding-top:1.6pt;padding-bottom:1.6pt}
