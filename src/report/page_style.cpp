@@ -131,7 +131,7 @@ tbody:last-child tr:last-child{border-bottom:1.5px solid var(--ink)}
   .facts{margin-top:12pt;padding-top:9pt}
   .verdict div{grid-template-columns:80pt 1fr;padding:6pt 0}
   h2,h3,h4,.find,caption{break-after:avoid}
-  svg,tr,.side,.verdict,.facts,figure,dd,.cautions{break-inside:avoid}
+  svg,tr,.side,.find,.note,.verdict,.facts,figure,dd,.cautions{break-inside:avoid}
   thead{display:table-header-group}
   .find{margin-bottom:9pt}
   h3{margin-top:14pt}
@@ -139,8 +139,8 @@ tbody:last-child tr:last-child{border-bottom:1.5px solid var(--ink)}
   .minerals{margin:0 158pt 34pt 100pt;width:calc(100% - 258pt)}
   .minerals .name{transform:translateX(-100pt)}.minerals .value{transform:translateX(76pt)}.minerals .state{transform:translateX(84pt)}
   .state .two{display:block}
-  .state .two .minerals{margin:0 158pt 34pt 100pt;width:calc(100% - 258pt)}
-  .steps{height:170pt;margin:26pt 96pt 36pt 32pt;width:calc(100% - 128pt)}.steps.low{height:80pt}
+  .state .two .minerals{margin:0 158pt 0 100pt;width:calc(100% - 258pt)}
+  .steps{height:170pt;margin:0 96pt 0 32pt;padding-top:26pt;width:calc(100% - 128pt)}.steps.low{height:80pt}
   .steps .yname{transform:translateX(-32pt)}
   .scroll{overflow:visible}
   th,td{padding-top:1.6pt;padding-bottom:1.6pt}
