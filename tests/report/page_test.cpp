@@ -99,7 +99,7 @@ std::vector<Printed> printed_numbers(std::string text) {
   for (int pass = 0; pass < 3; ++pass) {
     for (std::size_t d = 0; d < above.size(); ++d) {
       const std::string digit = std::to_string(d);
-      text = std::regex_replace(text, std::regex("(e-?\\d*)" + above[d]), "$1" + digit);
+      text = std::regex_replace(text, std::regex("(e-?\\d*)" + above[d]), "$01" + digit);
     }
   }
   std::vector<Printed> found;
@@ -142,8 +142,8 @@ std::vector<double> strangers(const Assessment& assessment) {
     const bool is_known = std::any_of(numbers.begin(), numbers.end(), [&](double number) {
       // A term of a sum may be rounded the other way so that the sum closes: up to a whole digit.
       const double slack = 2.1 * printed.half_digit;
-      return std::abs(number - printed.value) <= slack ||
-             std::abs(1e3 * number - printed.value) <= slack ||
+      return std::abs(std::abs(number) - std::abs(printed.value)) <= slack ||
+             std::abs(1e3 * std::abs(number) - std::abs(printed.value)) <= slack ||
              std::abs(1.96 * number - printed.value) <= slack;
     });
     if (!is_known) unknown.push_back(printed.value);
